@@ -1,0 +1,3 @@
+//! The job plan: YAML nodes with places in, typed values with places out.
+
+pub mod step;

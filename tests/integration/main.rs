@@ -1,0 +1,1 @@
+//! One test binary: the house, the published checks, the kits, the session, the screens.
