@@ -8,8 +8,8 @@ mod quantity;
 pub use band::{Band, Reading};
 pub use bearing::Bearing;
 pub use quantity::{
-    Angle, Area, CutRate, Density, Duration, Force, FractureEnergy, Inertia, Length, Mass, Moment,
-    NotFinite, Power, SecondMoment, SectionModulus, Speed, Stress, SweptVolume, Voltage,
+    Angle, Area, CutRate, Density, Duration, Force, FractureEnergy, FromSi, Inertia, Length, Mass,
+    Moment, NotFinite, Power, SecondMoment, SectionModulus, Speed, Stress, SweptVolume, Voltage,
 };
 
 /// Standard gravity, m/s². Source: 3rd CGPM (1901), 9.80665 exactly.

@@ -12,6 +12,17 @@ pub struct NotFinite {
     pub quantity: &'static str,
 }
 
+/// A quantity that can be made from a number in its SI unit.
+pub trait FromSi: Copy {
+    /// Makes it.
+    ///
+    /// # Errors
+    /// [`NotFinite`] where the number is NaN or infinite.
+    fn from_si(value: f64) -> Result<Self, NotFinite>;
+    /// The number in the SI unit.
+    fn to_si(self) -> f64;
+}
+
 macro_rules! quantity {
     ($(#[$doc:meta])* $name:ident, $words:literal, $unit:literal) => {
         $(#[$doc])*
@@ -65,6 +76,15 @@ macro_rules! quantity {
             /// The larger of two.
             pub const fn max(self, other: Self) -> Self {
                 if other.0 > self.0 { other } else { self }
+            }
+        }
+
+        impl FromSi for $name {
+            fn from_si(value: f64) -> Result<Self, NotFinite> {
+                Self::try_si(value)
+            }
+            fn to_si(self) -> f64 {
+                self.0
             }
         }
 

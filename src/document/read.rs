@@ -1,0 +1,328 @@
+//! Walks the parser's events into nodes and collects what the format refuses.
+
+use serde_yaml::granit_parser::{self, Event, Options, Parser, ScalarStyle, Span};
+
+use super::node::{Entry, Node, NodeKind};
+use super::refuse::{hidden_characters, refuse};
+use crate::diagnostic::{Finding, Place};
+
+/// The largest plan text, in bytes (4 MiB).
+pub const LIMIT_BYTES: usize = 4 * 1024 * 1024;
+const LIMIT_LEVELS: usize = 64;
+const LIMIT_NODES: usize = 1_000_000;
+
+/// What was read: a root where the text has one, and every refusal.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub struct Document {
+    /// The first document's root node.
+    pub root: Option<Node>,
+    /// Every refusal, in the order found.
+    pub findings: Vec<Finding>,
+}
+
+/// Reads a YAML text. Refused: anchors, aliases, merge keys, tags, directives, several documents,
+/// duplicate keys, keys that are no single value, hidden characters, texts past a limit. A syntax
+/// error ends the reading at its place.
+pub fn read(text: &str) -> Document {
+    if text.len() > LIMIT_BYTES {
+        let place = Place::new(0, 0);
+        let message = format!(
+            "the text has {} bytes; at most {LIMIT_BYTES} are read",
+            text.len()
+        );
+        let finding = refuse(
+            "TEXT-09",
+            place,
+            message,
+            "split the job into several plans",
+        );
+        return Document {
+            root: None,
+            findings: vec![finding],
+        };
+    }
+    let mut walk = Walk::new(text);
+    walk.findings.extend(hidden_characters(text));
+    let options: Options = granit_parser::options! {
+        strict_indentation: true,
+        emit_anchor_events: true,
+        emit_unresolved_aliases: true,
+        emit_comments: false,
+        flow_nesting_limit: LIMIT_LEVELS,
+        block_nesting_limit: LIMIT_LEVELS,
+    };
+    let mut parser = Parser::new_from_str_with_options(text, options);
+    while let Some(event) = parser.next_event() {
+        match event {
+            Ok((event, span)) => walk.take(event, span),
+            Err(error) => {
+                walk.syntax(&error);
+                break;
+            }
+        }
+        if walk.nodes > LIMIT_NODES {
+            let message = format!("the text has more than {LIMIT_NODES} values");
+            let end = Place::new(text.len(), text.len());
+            walk.findings.push(refuse(
+                "TEXT-09",
+                end,
+                message,
+                "split the job into several plans",
+            ));
+            walk.root = None;
+            break;
+        }
+    }
+    walk.finish()
+}
+
+struct Walk<'a> {
+    text: &'a str,
+    root: Option<Node>,
+    open: Vec<Open>,
+    documents: usize,
+    nodes: usize,
+    findings: Vec<Finding>,
+}
+
+/// A list or mapping being filled.
+enum Open {
+    List {
+        start: usize,
+        items: Vec<Node>,
+    },
+    Map {
+        start: usize,
+        entries: Vec<Entry>,
+        key: Option<(String, Place)>,
+    },
+}
+
+impl<'a> Walk<'a> {
+    fn new(text: &'a str) -> Self {
+        Self {
+            text,
+            root: None,
+            open: vec![],
+            documents: 0,
+            nodes: 0,
+            findings: vec![],
+        }
+    }
+
+    fn place(&self, span: Span) -> Place {
+        let range = span.byte_range().unwrap_or(0..0);
+        let end = range.end.min(self.text.len());
+        let start = range.start.min(end);
+        let trimmed = self
+            .text
+            .get(start..end)
+            .map_or(end, |s| start + s.trim_end().len());
+        Place::new(start, trimmed.max(start))
+    }
+
+    fn syntax(&mut self, error: &granit_parser::ScanError) {
+        let byte = error
+            .marker()
+            .byte_offset()
+            .unwrap_or(0)
+            .min(self.text.len());
+        let message = format!("this is not readable as YAML: {}", error.info());
+        let help = "look at this line and the one above: indentation by spaces, `key: value`, \
+                    brackets closed, text with `: ` or `#` in quotes";
+        self.findings
+            .push(refuse("TEXT-03", Place::new(byte, byte + 1), message, help));
+        self.root = None;
+        self.open.clear();
+    }
+
+    fn take(&mut self, event: Event<'_>, span: Span) {
+        let place = self.place(span);
+        match event {
+            Event::DocumentStart(_, version) => self.document_start(version.is_some(), place),
+            Event::Scalar(text, style, _, tag) => {
+                if tag.is_some() {
+                    self.tag(place);
+                }
+                let plain = style == ScalarStyle::Plain;
+                self.node(Node {
+                    place,
+                    kind: NodeKind::Scalar {
+                        text: text.into_owned(),
+                        plain,
+                    },
+                });
+            }
+            Event::SequenceStart(_, _, tag) => {
+                if tag.is_some() {
+                    self.tag(place);
+                }
+                self.start(Open::List {
+                    start: place.start,
+                    items: vec![],
+                });
+            }
+            Event::MappingStart(_, _, tag) => {
+                if tag.is_some() {
+                    self.tag(place);
+                }
+                self.start(Open::Map {
+                    start: place.start,
+                    entries: vec![],
+                    key: None,
+                });
+            }
+            Event::SequenceEnd | Event::MappingEnd => self.end(place),
+            Event::Anchor(_, name) => self.anchor(&name, place),
+            Event::Alias(_) => self.alias(place),
+            Event::UnresolvedAlias(_) => self.alias(place),
+            _ => {}
+        }
+    }
+
+    fn document_start(&mut self, versioned: bool, place: Place) {
+        self.documents += 1;
+        if versioned {
+            let message = "a `%YAML` directive is not used in plans".to_owned();
+            self.findings.push(refuse(
+                "TEXT-08",
+                place,
+                message,
+                "delete the directive line",
+            ));
+        }
+        if self.documents == 2 {
+            let message = "a second document begins here; a plan is one document".to_owned();
+            let help = "delete the `---` line, or put the second part in a file of its own";
+            self.findings.push(refuse("TEXT-07", place, message, help));
+        }
+    }
+
+    fn tag(&mut self, place: Place) {
+        let message = "tags (`!name`) are not used in plans".to_owned();
+        self.findings.push(refuse(
+            "TEXT-06",
+            place,
+            message,
+            "write the value without the tag",
+        ));
+    }
+
+    fn anchor(&mut self, name: &str, place: Place) {
+        let message = format!("anchors (`&{name}`) are not used in plans");
+        let help = "write the values out where they belong, so that each has its own place";
+        self.findings.push(refuse("TEXT-05", place, message, help));
+    }
+
+    fn alias(&mut self, place: Place) {
+        let message = "aliases (`*name`) are not used in plans".to_owned();
+        let help = "write the values out where they belong, so that each has its own place";
+        self.findings.push(refuse("TEXT-05", place, message, help));
+        self.node(Node {
+            place,
+            kind: NodeKind::Scalar {
+                text: String::new(),
+                plain: true,
+            },
+        });
+    }
+
+    fn start(&mut self, open: Open) {
+        if let Some(Open::Map {
+            key: None, start, ..
+        }) = self.open.last()
+        {
+            let message = "a key must be a single word, not a list or a group".to_owned();
+            let place = Place::new(*start, *start + 1);
+            self.findings
+                .push(refuse("TEXT-11", place, message, "write `key: value`"));
+        }
+        self.open.push(open);
+    }
+
+    fn end(&mut self, place: Place) {
+        let end = place.end;
+        let node = match self.open.pop() {
+            Some(Open::List { start, items }) => {
+                let end = end.max(items.last().map_or(start, |n| n.place.end));
+                Node {
+                    place: Place::new(start, end),
+                    kind: NodeKind::List(items),
+                }
+            }
+            Some(Open::Map { start, entries, .. }) => {
+                let end = end.max(entries.last().map_or(start, |e| e.value.place.end));
+                Node {
+                    place: Place::new(start, end),
+                    kind: NodeKind::Map(entries),
+                }
+            }
+            None => return,
+        };
+        self.node(node);
+    }
+
+    fn node(&mut self, node: Node) {
+        self.nodes += 1;
+        match self.open.last_mut() {
+            None => {
+                if self.documents <= 1 {
+                    self.root = Some(node);
+                }
+            }
+            Some(Open::List { items, .. }) => items.push(node),
+            Some(Open::Map { entries, key, .. }) => match key.take() {
+                None => *key = Some(key_of(&node)),
+                Some((name, key_place)) => {
+                    if let Some(finding) = refused_key(&name, key_place, entries) {
+                        self.findings.push(finding);
+                    } else {
+                        entries.push(Entry {
+                            key: name,
+                            key_place,
+                            value: node,
+                        });
+                    }
+                }
+            },
+        }
+    }
+
+    fn finish(mut self) -> Document {
+        let empty = self.root.as_ref().is_none_or(Node::is_empty);
+        if empty && self.findings.is_empty() {
+            let message = "the file holds no plan".to_owned();
+            let help = "a plan begins with `plan: 1`";
+            self.findings
+                .push(refuse("TEXT-10", Place::new(0, 0), message, help));
+        }
+        Document {
+            root: self.root.filter(|r| !r.is_empty()),
+            findings: self.findings,
+        }
+    }
+}
+
+fn key_of(node: &Node) -> (String, Place) {
+    match &node.kind {
+        NodeKind::Scalar { text, .. } => (text.clone(), node.place),
+        NodeKind::List(_) | NodeKind::Map(_) => (String::new(), node.place),
+    }
+}
+
+/// A duplicate or merge key is refused; the first value stands.
+fn refused_key(name: &str, place: Place, entries: &[Entry]) -> Option<Finding> {
+    if name == "<<" {
+        let message = "merge keys (`<<`) are not used in plans".to_owned();
+        return Some(refuse("TEXT-05", place, message, "write the keys out"));
+    }
+    entries.iter().find(|e| e.key == name).map(|_| {
+        let message = format!("the key `{name}` stands twice in this group");
+        refuse(
+            "TEXT-04",
+            place,
+            message,
+            "keep one of the two and delete the other",
+        )
+    })
+}
