@@ -176,7 +176,7 @@ impl<'a> Walk<'a> {
             Event::Anchor(_, name) => self.anchor(&name, place),
             Event::Alias(_) => self.alias(place),
             Event::UnresolvedAlias(_) => self.alias(place),
-            _ => {}
+            Event::StreamStart | Event::StreamEnd | Event::DocumentEnd | _ => {}
         }
     }
 

@@ -214,9 +214,9 @@ impl Reader {
             return None;
         };
         match quantity::read(text, field.kind) {
-            Ok(read) => self.in_range(read, node, route, field),
+            Ok(read) => self.in_range(read, node, (route, field)),
             Err(refused) => {
-                self.refused_quantity(&refused, node, route, field);
+                self.refused_quantity(&refused, node, (route, field));
                 None
             }
         }
@@ -237,8 +237,7 @@ impl Reader {
         &mut self,
         read: quantity::Read,
         node: &Node,
-        route: &str,
-        field: &Field,
+        (route, field): (&str, &Field),
     ) -> Option<Measured<T>> {
         // Written so that whatever is not inside the range is refused.
         if !(field.least <= read.value && read.value <= field.most) {
@@ -265,7 +264,7 @@ impl Reader {
         })
     }
 
-    fn refused_quantity(&mut self, refused: &Refused, node: &Node, route: &str, field: &Field) {
+    fn refused_quantity(&mut self, refused: &Refused, node: &Node, (route, field): (&str, &Field)) {
         let units = field.kind.unit_words();
         let first = field.kind.units().first().map_or("", |(word, _)| *word);
         let (code, help) = match refused {
