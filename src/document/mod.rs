@@ -6,4 +6,4 @@ mod read;
 mod refuse;
 
 pub use node::{Entry, Node, NodeKind};
-pub use read::{Document, LIMIT_BYTES, read};
+pub use read::{Document, LIMIT_BYTES, read, read_part};

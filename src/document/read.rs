@@ -326,3 +326,11 @@ fn refused_key(name: &str, place: Place, entries: &[Entry]) -> Option<Finding> {
         )
     })
 }
+
+/// Reads one of the program's own parts into its type. Plans never come this way.
+///
+/// # Errors
+/// The reader's own words, with line and column.
+pub fn read_part<T: serde::de::DeserializeOwned>(text: &str) -> Result<T, String> {
+    serde_yaml::from_str(text).map_err(|error| error.to_string())
+}
