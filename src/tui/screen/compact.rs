@@ -1,0 +1,72 @@
+//! The card for small windows and far readers: one step, its call, its field.
+
+use ratatui::layout::Rect;
+
+use super::View;
+use super::header::{cut, footer_words, tree_line};
+use super::paper::Paper;
+use crate::briefing::Form;
+use crate::tui::answer;
+
+/// Draws it.
+pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>) {
+    let (width, height) = paper.size();
+    let session = view.session;
+    paper.bold(0, 0, &cut(&tree_line(session), usize::from(width)));
+    let Some(item) = session.lit() else {
+        paper.bold(0, 2, session.stage.title());
+        paper.text(0, 4, view.code);
+        paper.text(0, height - 1, &cut(&footer_words(view), usize::from(width)));
+        return;
+    };
+    let total = session.items().len();
+    paper.text(
+        0,
+        1,
+        &format!("{}, step {} of {total}", session.stage.title(), item.number),
+    );
+    let mut row = 2;
+    paper.lit(
+        0,
+        row,
+        &cut(
+            &format!("> {} > {}", item.number, item.name.to_uppercase()),
+            usize::from(width),
+        ),
+    );
+    row += 1;
+    row += paper.wrapped(Rect::new(0, row, width, 2), &item.call);
+    let room = height.saturating_sub(row + 4);
+    if let Form::Choose(options) = &item.form {
+        let all: Vec<String> = (1..)
+            .zip(options)
+            .map(|(n, o)| format!("{n} {}", o.say))
+            .collect();
+        paper.wrapped(Rect::new(0, row, width, room), &all.join("  "));
+    } else if let Some(sentence) = &item.sentence {
+        paper.wrapped(Rect::new(0, row, width, room), sentence);
+    }
+    let slots = answer::slots(&item, session.job.units);
+    let typed: Vec<String> = slots
+        .iter()
+        .enumerate()
+        .map(|(i, slot)| {
+            let typed = view.desk.fields.get(i).map_or("", String::as_str);
+            let shown = if item.blind_with.is_some() {
+                "*".repeat(typed.len())
+            } else {
+                typed.to_owned()
+            };
+            format!("[{shown:<4}] {}", slot.unit)
+        })
+        .collect();
+    let line = format!("{} number [{}]", typed.join(" "), view.desk.number);
+    paper.bold(0, height - 3, &cut(line.trim_start(), usize::from(width)));
+    let message = match (&session.kept_open, view.desk.recording) {
+        (_, true) => "RECORDING".to_owned(),
+        (Some((_, todo)), false) => todo.clone(),
+        (None, false) => view.desk.message.clone(),
+    };
+    paper.text(0, height - 2, &cut(&message, usize::from(width)));
+    paper.text(0, height - 1, &cut(&footer_words(view), usize::from(width)));
+}
