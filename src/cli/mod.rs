@@ -1,8 +1,58 @@
 //! The front hall: words in, words out, an exit code.
 
+pub mod exit;
+pub mod output;
+pub mod command;
+
 use std::process::ExitCode;
+
+use clap::{Parser, Subcommand};
+
+use exit::Exit;
+use output::Output;
+
+/// Sizes up leaning trees, checks felling plans, briefs the crew, walks the cuts and keeps a
+/// signed record.
+#[derive(Debug, Parser)]
+#[command(name = "stumpside", version, about)]
+struct Line {
+    #[command(subcommand)]
+    command: Command,
+}
+
+#[derive(Debug, Subcommand)]
+enum Command {
+    /// Look at and verify records.
+    Record(command::record::RecordArgs),
+    /// Keys of the crew.
+    Crew(command::crew::CrewArgs),
+}
 
 /// Reads the command line, runs the command and returns its exit code.
 pub fn run() -> ExitCode {
-    ExitCode::SUCCESS
+    output::with_standard(|output| match Line::try_parse() {
+        Ok(line) => dispatch(&line, output),
+        Err(error) => explain(&error, output),
+    })
+    .into()
+}
+
+fn dispatch(line: &Line, output: &mut Output<'_>) -> Exit {
+    match &line.command {
+        Command::Record(args) => command::record::run(args, output),
+        Command::Crew(args) => {
+            command::crew::run(args, output, &mut crate::shell::passphrase::ask_hidden)
+        }
+    }
+}
+
+fn explain(error: &clap::Error, output: &mut Output<'_>) -> Exit {
+    let text = error.render().to_string();
+    if error.use_stderr() {
+        output.talk(text.trim_end());
+        Exit::Usage
+    } else {
+        output.data(text.trim_end());
+        Exit::Good
+    }
 }

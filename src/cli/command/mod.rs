@@ -1,0 +1,4 @@
+//! The commands, one file each.
+
+pub mod record;
+pub mod crew;

@@ -1,0 +1,142 @@
+//! The kinds of entry of format 1, each with its meaning, its fields and who signs it.
+//! A test compares this table with the written page `FORMAT.md`; a kind is added, never changed.
+
+/// Who must sign an entry of a kind.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Seal {
+    /// Nobody must; where a member `signer` names a person, that person has signed.
+    Free,
+    /// The person named in the member `signer`.
+    Person,
+    /// Each person who is present signs one of their own.
+    EachPresent,
+    /// The crew leader.
+    Leader,
+}
+
+impl Seal {
+    /// The words of the written page.
+    pub const fn words(self) -> &'static str {
+        match self {
+            Self::Free => "-",
+            Self::Person => "the signer",
+            Self::EachPresent => "each person present",
+            Self::Leader => "the leader",
+        }
+    }
+}
+
+/// One kind of entry.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub struct Kind {
+    /// Its name in the record.
+    pub name: &'static str,
+    /// Who signs it.
+    pub seal: Seal,
+    /// Its own members; a member ending in `*` carries its unit as its name's end.
+    pub fields: &'static str,
+    /// What it says, in one sentence.
+    pub meaning: &'static str,
+}
+
+const fn kind(name: &'static str, seal: Seal, fields: &'static str, meaning: &'static str) -> Kind {
+    Kind {
+        name,
+        seal,
+        fields,
+        meaning,
+    }
+}
+
+use Seal::{EachPresent, Free, Leader, Person};
+
+/// Every kind, in the order of the day.
+#[rustfmt::skip]
+pub const KINDS: &[Kind] = &[
+    kind("open", Free, "record job plan plan_sha256 leader crew parts program language demo_keys continues", "The record begins and binds the plan, the crew and the texts it is about."),
+    kind("roll_call", Free, "present absent keyed_by", "The leader called the roll: who is here and who is not."),
+    kind("present", Free, "who keyed_by", "This person is here."),
+    kind("absent", Free, "who reason keyed_by", "This person is not here today."),
+    kind("plan_signed", Person, "who said language plan_sha256", "This person stands for the plan as hashed here."),
+    kind("own_hazard", Free, "who hazard told_by keyed_by heard", "A person named a hazard they saw themselves."),
+    kind("asked", Free, "question who said language keyed_by", "A briefing question was put to a named person."),
+    kind("answered", Free, "question who answer told_by keyed_by heard", "The named person's answer to a briefing question."),
+    kind("brief_signed", EachPresent, "who role said language heard keyed_by", "A person signs that they heard the briefing and agree to their part."),
+    kind("tree_chosen", Free, "tree keyed_by", "The work turns to this tree."),
+    kind("short_talk_done", Free, "tree said language keyed_by", "The short talk before this tree was held."),
+    kind("item_answered", Free, "tree list item answer text told_by keyed_by heard", "A checklist item was answered at the tree."),
+    kind("remeasured", Free, "tree what planned* measured* typed within told_by keyed_by heard", "A planned value was measured again at the tree."),
+    kind("second_look_held", Free, "tree what who commitment_sha256", "A first look is held unseen, as a hash over a nonce and the text."),
+    kind("second_look_revealed", Free, "tree what first first_by nonce second second_by equal blind", "Both looks are shown together."),
+    kind("second_look_lost", Free, "tree what reason", "A held look was lost, so both are asked again."),
+    kind("sized_up", Free, "tree figures steps findings state changed", "The figures, steps and findings as they were shown."),
+    kind("step_done", Person, "tree step who role said language planned* measured* typed within told_by keyed_by heard relayed", "A step was confirmed with its value."),
+    kind("step_skipped", Free, "tree step reason told_by keyed_by heard", "A step was left out, with the reason."),
+    kind("step_taken_back", Free, "tree step takes_back reason told_by keyed_by heard", "A confirmation was taken back by naming its entry."),
+    kind("refused_keys", Free, "count screen", "Keys that did nothing were counted."),
+    kind("stop", Free, "tree step keyed_by", "STOP, written at once and unsigned."),
+    kind("stop_reason", Person, "stops who reason told_by keyed_by heard", "Who called the stop and why."),
+    kind("resumed", Free, "stops reason keyed_by", "Work goes on after a stop."),
+    kind("keep_place", Free, "tree step keyed_by", "The person at the keys turned away and kept the place."),
+    kind("talk_again", Free, "tree changes reason keyed_by", "A changed fact voided the agreement; old and new stand side by side."),
+    kind("signed_again", Person, "who said language talk", "A person agrees again after a change."),
+    kind("reading", Free, "what value* typed told_by keyed_by heard", "A reading taken during the work, such as the wind."),
+    kind("own_call", Free, "tree who call told_by keyed_by heard", "The crew's own call, beside the computed state."),
+    kind("hold_item", Free, "tree step item answer told_by keyed_by heard", "An item of the hold line was answered."),
+    kind("go", Person, "tree step who role said told_by keyed_by heard relayed", "One person's go at the hold line."),
+    kind("brisk_start", Free, "tree step planned_ms", "The brisk stretch began."),
+    kind("brisk_stop_called", Free, "tree step after_ms", "STOP was called within the brisk stretch; its clock runs on."),
+    kind("brisk_end", Free, "tree step outcome took_ms planned_ms", "The brisk stretch ended."),
+    kind("outcome", Free, "tree outcome fell_toward_mdeg told_by keyed_by heard", "What the tree did."),
+    kind("stump_measured", Free, "tree what planned* measured* typed within told_by keyed_by", "A value measured on the stump afterwards."),
+    kind("all_clear", Person, "tree who said told_by keyed_by heard", "The tree is finished and everyone may come in."),
+    kind("head_count", Free, "counted expected missing told_by keyed_by heard", "Everyone was counted."),
+    kind("near_miss", Free, "tree text told_by keyed_by heard", "Something nearly went wrong."),
+    kind("note", Free, "text keyed_by", "A remark."),
+    kind("late_entry", Free, "happened_utc text told_by keyed_by", "Something that happened earlier is written down late."),
+    kind("correction", Free, "corrects member text reason keyed_by", "An earlier entry was wrong; it stays, and this says what is right."),
+    kind("trouble_opened", Free, "tree card step keyed_by", "A trouble card was opened."),
+    kind("trouble_line_done", Free, "tree card line answer told_by keyed_by heard", "A line of a trouble card was done."),
+    kind("join", Free, "who role keyed_by", "A person came to the job."),
+    kind("leave", Free, "who reason keyed_by", "A person left the job."),
+    kind("lost_contact", Free, "who last_heard_utc keyed_by", "A person could not be reached."),
+    kind("hand_over", Free, "from to keyed_by", "The laptop was handed over."),
+    kind("plan_replaced", Free, "plan_sha256 was_sha256 reason keyed_by", "Another plan holds from here; all talk again."),
+    kind("left_standing", Person, "tree who said cuts ring_guarded told keyed_by", "A tree was left standing with cuts in it."),
+    kind("clock_step", Free, "moved_ms", "The wall clock was moved against the machine's own clock."),
+    kind("receipt_shown", Free, "shown_seq code to way", "A record code was shown to be carried away."),
+    kind("recover", Free, "how torn_bytes torn_sha256 error_number lost_seq", "Writing went on after a torn or failed write."),
+    kind("sign_out", EachPresent, "who said language keyed_by", "A person signs out of the job."),
+    kind("close", Leader, "who said language outcome", "The leader closes the record; only its signature follows."),
+    kind("sig", Free, "signs who sig", "The signature over the line before it."),
+];
+
+/// The row of a kind, or `None` where format 1 does not know it.
+pub fn find(name: &str) -> Option<&'static Kind> {
+    KINDS.iter().find(|kind| kind.name == name)
+}
+
+/// Whether an entry of this kind must have a member `signer`.
+pub fn needs_signer(name: &str) -> bool {
+    find(name).is_some_and(|kind| kind.seal != Seal::Free)
+}
+
+/// Whether a kind may still be written when the last tenth of the record's limits is reached.
+pub fn kept_for_the_end(name: &str) -> bool {
+    matches!(
+        name,
+        "stop"
+            | "stop_reason"
+            | "brisk_stop_called"
+            | "brisk_end"
+            | "outcome"
+            | "all_clear"
+            | "head_count"
+            | "left_standing"
+            | "lost_contact"
+            | "receipt_shown"
+            | "recover"
+            | "sign_out"
+            | "close"
+    )
+}
