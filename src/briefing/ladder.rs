@@ -299,16 +299,7 @@ fn list_item_of(
     (from, tree, asked_of): (&ListItem, &JobTree, &str),
 ) -> Item {
     let form = if from.people {
-        Form::Choose(
-            present
-                .iter()
-                .take(9)
-                .map(|id| Option_ {
-                    stands_for: Some(id.clone()),
-                    ..Option_::plain(job.name_of(id))
-                })
-                .collect(),
-        )
+        Form::Choose(people_options(job, present))
     } else if let Some(wanted) = &from.words {
         Form::Words(wanted.clone())
     } else if from.measure.is_empty() {
@@ -328,7 +319,7 @@ fn list_item_of(
         kind,
         blind_with,
         signs: if matches!(kind, Kind::Go | Kind::AllClear | Kind::StopReason) {
-            Signs::Asked
+            Signs::Keyer
         } else {
             Signs::Nobody
         },
@@ -341,6 +332,21 @@ fn list_item_of(
             asked_of,
         )
     }
+}
+
+/// Whoever is here; before anybody answered the roll, everyone of the crew.
+fn people_options(job: &Job, present: &[String]) -> Vec<Option_> {
+    let everyone: Vec<String> = job.people.iter().map(|p| p.id.clone()).collect();
+    let ids = if present.is_empty() {
+        &everyone
+    } else {
+        present
+    };
+    let option = |id: &String| Option_ {
+        stands_for: Some(id.clone()),
+        ..Option_::plain(job.name_of(id))
+    };
+    ids.iter().take(9).map(option).collect()
 }
 
 fn kind_of(from: &ListItem) -> Kind {

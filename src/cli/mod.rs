@@ -2,6 +2,7 @@
 
 pub mod exit;
 pub mod output;
+pub mod environment;
 pub mod command;
 
 use std::process::ExitCode;
@@ -22,6 +23,12 @@ struct Line {
 
 #[derive(Debug, Subcommand)]
 enum Command {
+    /// Finds everything wrong with a plan, in one run.
+    Check(command::check::CheckArgs),
+    /// Opens the terminal program on a job; goes on where its record ends.
+    Brief(command::brief::BriefArgs),
+    /// Copies a demo job into a folder of its own and opens it.
+    Demo(command::demo::DemoArgs),
     /// Look at and verify records.
     Record(command::record::RecordArgs),
     /// Keys of the crew.
@@ -39,6 +46,13 @@ pub fn run() -> ExitCode {
 
 fn dispatch(line: &Line, output: &mut Output<'_>) -> Exit {
     match &line.command {
+        Command::Check(args) => command::check::run(args, output),
+        Command::Brief(args) => {
+            command::brief::run(args, &environment::Environment::look_around(), output)
+        }
+        Command::Demo(args) => {
+            command::demo::run(args, &environment::Environment::look_around(), output)
+        }
         Command::Record(args) => command::record::run(args, output),
         Command::Crew(args) => {
             command::crew::run(args, output, &mut crate::shell::passphrase::ask_hidden)

@@ -10,3 +10,7 @@ pub mod watermark;
 pub mod record_store;
 pub mod record_file;
 pub mod record_resume;
+pub mod terminal;
+pub mod job_folder;
+pub mod day;
+pub mod brief;

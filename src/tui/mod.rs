@@ -13,5 +13,5 @@ mod words;
 pub use ascii::to_ascii;
 pub use desk::{Desk, Intent, Overlay};
 pub use key::Key;
-pub use look::Look;
+pub use look::{Ground, Letters, Look};
 pub use screen::{View, draw};

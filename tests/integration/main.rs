@@ -1,1 +1,4 @@
 //! One test binary: the house, the published checks, the kits, the session, the screens.
+
+mod support;
+mod session;

@@ -2,3 +2,7 @@
 
 pub mod record;
 pub mod crew;
+
+pub mod brief;
+pub mod check;
+pub mod demo;

@@ -132,5 +132,5 @@ pub(super) fn footer_words(view: &View<'_>) -> String {
     } else {
         "SPACE = STOP"
     };
-    format!("{stop}   {how}   h heard by   m keep place   u undo   ? help")
+    format!("{stop}   {how}   u undo   ? help")
 }

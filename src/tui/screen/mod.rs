@@ -69,7 +69,7 @@ fn work(view: &View<'_>, paper: &mut Paper<'_>) {
     header::draw(view, paper);
     let (width, height) = paper.size();
     let body = Rect::new(0, 2, width, height - 4);
-    const LEFT: u16 = 30;
+    const LEFT: u16 = 29;
     let right_edge = if width >= 118 { width - 38 } else { width };
     paper.column_line(LEFT, body);
     ladder::draw(view, paper, Rect::new(0, body.y, LEFT - 1, body.height));

@@ -180,7 +180,8 @@ fn form(view: &View<'_>, paper: &mut Paper<'_>, (part, item): (Rect, &Item)) -> 
         );
     }
     if let Form::Measure(fields) = &item.form {
-        for field in fields {
+        // A blind look is not led by the plan's own figure.
+        for field in fields.iter().filter(|_| item.blind_with.is_none()) {
             if let Some(plan) = plan_line(view.session, field) {
                 paper.text(part.x, row, &plan);
                 row += 1;
@@ -193,7 +194,7 @@ fn form(view: &View<'_>, paper: &mut Paper<'_>, (part, item): (Rect, &Item)) -> 
         row += 1;
     }
     number_line(view, paper, (part.x, row), item);
-    row + 2
+    row + 3
 }
 
 fn plan_line(session: &Session, field: &Field) -> Option<String> {
@@ -239,16 +240,17 @@ fn number_line(view: &View<'_>, paper: &mut Paper<'_>, (x, row): (u16, u16), ite
     let last = view.desk.focus >= answer::slots(item, view.session.job.units).len();
     let caret = if last { ">" } else { " " };
     let label = format!("step's number, {}", item.number);
-    let field = format!(
-        "{caret} {label:<16} [ {:<5} ] then Enter    heard by {}",
-        view.desk.number,
-        view.desk.heard.word()
-    );
+    let field = format!("{caret} {label:<16} [ {:<5} ] then Enter", view.desk.number);
     if last {
         paper.bold(x, row, &field)
     } else {
         paper.text(x, row, &field)
     }
+    paper.text(
+        x,
+        row + 1,
+        &format!("  heard by {}", view.desk.heard.word()),
+    );
 }
 
 /// The panel where nothing is asked: the closed day.

@@ -1,0 +1,589 @@
+//! Runs the day: keys to acts, effects to the disk and back as facts. It decides nothing; what
+//! may be done is the session's word, what is on disk is the record's.
+
+use std::sync::Arc;
+
+use thiserror::Error;
+
+use super::clock::Clock;
+use super::entropy::{self, NoEntropy};
+use super::files::FileError;
+use super::job_folder::{self, FolderError};
+use super::key_store::{KeyError, KeyStore};
+use super::record_file::{Places, RecordError, RecordFile};
+use crate::briefing::{self, Job};
+use crate::parts::{Parts, What};
+use crate::plan::Plan;
+use crate::record::code::RecordCode;
+use crate::record::draft::Written;
+use crate::record::duty::cut_off;
+use crate::record::line::hex;
+use crate::record::opening::{Opening, Roster};
+use crate::record::public_key::PublicKey;
+use crate::record::{CrewMember, Draft, ParsedLine, Stamp as FullStamp, facts};
+use crate::session::{
+    Act, Effect, Event, Fact, Recorded, Session, Stage, Stamp, outstanding, replay, step,
+};
+use crate::tui::{Desk, Intent, Key, Overlay};
+
+/// Why a day cannot be begun or gone on with.
+#[derive(Debug, Error)]
+pub enum DayError {
+    /// The record.
+    #[error(transparent)]
+    Record(#[from] RecordError),
+    /// The job folder.
+    #[error(transparent)]
+    Folder(#[from] FolderError),
+    /// A key.
+    #[error(transparent)]
+    Key(#[from] KeyError),
+    /// A file.
+    #[error(transparent)]
+    File(#[from] FileError),
+    /// No randomness.
+    #[error(transparent)]
+    Entropy(#[from] NoEntropy),
+    /// The record in the folder is about another plan.
+    #[error(
+        "the record in this folder is about another plan (its plan's hash begins {recorded}, this one's {here}); work on with the plan it names, or give this plan a folder of its own"
+    )]
+    AnotherPlan {
+        /// Begin of the hash in the record.
+        recorded: String,
+        /// Begin of this plan's hash.
+        here: String,
+    },
+    /// An entry that the program should know does not read.
+    #[error(
+        "entry {seq} ({kind}) does not read as this program writes it; the record is left as it is"
+    )]
+    Unreadable {
+        /// Its number.
+        seq: u64,
+        /// Its kind.
+        kind: String,
+    },
+    /// The leader has no key, so nobody could close the record.
+    #[error(
+        "the leader {0} has no key in the plan; a record needs one to be closed (see `stumpside crew add`)"
+    )]
+    LeaderWithoutKey(String),
+}
+
+/// What the day is about.
+pub struct Ground {
+    /// The plan.
+    pub plan: Plan,
+    /// Its exact bytes.
+    pub plan_bytes: Vec<u8>,
+    /// Where it lies.
+    pub plan_path: std::path::PathBuf,
+    /// The parts.
+    pub parts: Parts,
+    /// The crew with their keys.
+    pub crew: Vec<CrewMember>,
+    /// Where the record lies.
+    pub places: Places,
+}
+
+/// The day under way.
+pub struct Day {
+    ground: Ground,
+    record: RecordFile,
+    keys: KeyStore,
+    clock: Clock,
+    /// The state.
+    pub session: Session,
+    /// What is half typed.
+    pub desk: Desk,
+    code: String,
+    waiting_for_key: Option<Act>,
+    last_refused_ms: Option<i64>,
+    last_stamp: FullStamp,
+    /// Whether the record can take nothing more: only paper is left.
+    pub on_paper: bool,
+}
+
+/// Called between drawing RECORDING and the write.
+pub type Redraw<'a> = dyn FnMut(&Day) + 'a;
+
+impl Day {
+    /// Begins the day, or goes on where its record ends.
+    ///
+    /// # Errors
+    /// [`DayError`]; nothing is then changed but what the error says.
+    pub fn open(ground: Ground) -> Result<Self, DayError> {
+        let clock = Clock::start()?;
+        let now = clock.now();
+        let job = Arc::new(Job::new(&ground.plan, ground.parts.clone()));
+        let leader = ground.crew.iter().find(|c| c.id == job.leader);
+        if leader.is_none_or(|l| l.key.is_none()) {
+            return Err(DayError::LeaderWithoutKey(job.leader.clone()));
+        }
+        let mut keys = KeyStore::default();
+        unlock_open_keys(&ground, &mut keys)?;
+        let opening = opening(&ground, now)?;
+        let (record, written, session) = match RecordFile::create(&ground.places, &opening) {
+            Ok((record, first)) => (record, first.code(), Session::new(job)),
+            Err(RecordError::Exists(_)) => {
+                let (record, lines) = RecordFile::resume(&ground.places, &now)?;
+                let code = lines
+                    .last()
+                    .map_or_else(|| RecordCode::of(&[0; 32]), |l| RecordCode::of(&l.hash));
+                (record, code, resumed(&lines, &opening, job)?)
+            }
+            Err(error) => return Err(error.into()),
+        };
+        let mut day = Self {
+            ground,
+            record,
+            keys,
+            clock,
+            session,
+            desk: Desk::default(),
+            code: written.to_string(),
+            waiting_for_key: None,
+            last_refused_ms: None,
+            last_stamp: now,
+            on_paper: false,
+        };
+        day.first_entries()?;
+        day.desk.follow(&day.session);
+        Ok(day)
+    }
+
+    /// What a new or reopened record begins with: every tree's card, or the word that it goes on.
+    fn first_entries(&mut self) -> Result<(), DayError> {
+        let mut facts = vec![];
+        if self.session.seq > 0 || !self.session.cards.is_empty() {
+            facts.push(Fact::Reopened);
+            if let Some(held) = &self.session.held {
+                facts.push(Fact::LookLost {
+                    item: held.item.clone(),
+                });
+            }
+        }
+        for tree in &self.ground.plan.trees {
+            let id = &tree.id.value;
+            if !self.session.cards.contains_key(id) {
+                let card = Box::new(self.card(id, &[]));
+                facts.push(Fact::SizedUp {
+                    tree: id.clone(),
+                    card,
+                    because: "as planned".to_owned(),
+                    changes: vec![],
+                });
+            }
+        }
+        for fact in facts {
+            self.write(vec![fact])?;
+        }
+        let due = outstanding(&self.session);
+        self.run(due, &mut |_| {})
+    }
+
+    fn card(&self, tree: &str, measured: &[(What, i64)]) -> briefing::Card {
+        briefing::size_up(&self.ground.plan, tree, (measured, &self.ground.parts))
+    }
+
+    /// The record's code now.
+    pub fn code(&self) -> &str {
+        &self.code
+    }
+
+    /// Now, for drawing.
+    pub fn now(&self) -> (Stamp, i32) {
+        let now = self.clock.now();
+        (
+            Stamp {
+                utc_ms: now.utc_ms,
+                up_ms: now.up_ms,
+            },
+            now.off_min,
+        )
+    }
+
+    /// Whether anybody's key is one for demonstrations.
+    pub fn demo(&self) -> bool {
+        self.ground
+            .crew
+            .iter()
+            .filter_map(|c| c.key.as_ref())
+            .any(PublicKey::is_demo)
+    }
+
+    /// Takes a key; true where the program is to be left.
+    ///
+    /// # Errors
+    /// [`DayError`] where something other than the write of an act fails.
+    pub fn on_key(&mut self, key: &Key, redraw: &mut Redraw<'_>) -> Result<bool, DayError> {
+        let before = self.desk.refused;
+        let intent = self.desk.on_key(&self.session, key);
+        match intent {
+            None => {}
+            Some(Intent::Leave) => return Ok(true),
+            Some(Intent::Unlock(person, passphrase)) => {
+                self.unlock(&person, &passphrase, redraw)?
+            }
+            Some(Intent::Act(act)) => self.act(act, redraw)?,
+        }
+        if self.desk.refused > before {
+            self.last_refused_ms = Some(self.clock.now().up_ms);
+        }
+        Ok(false)
+    }
+
+    /// What a quiet second brings: refused keys go on the record.
+    ///
+    /// # Errors
+    /// [`DayError`] where the write fails and no other place takes it.
+    pub fn on_quiet(&mut self) -> Result<(), DayError> {
+        let quiet = self
+            .last_refused_ms
+            .is_some_and(|at| self.clock.now().up_ms - at >= 1_000);
+        if quiet && !self.on_paper && self.session.stage != Stage::Closed {
+            let facts = self.refused_keys();
+            self.record_facts(facts, &mut |_| {})?;
+        }
+        Ok(())
+    }
+
+    fn refused_keys(&mut self) -> Vec<Fact> {
+        self.last_refused_ms = None;
+        match std::mem::take(&mut self.desk.refused) {
+            0 => vec![],
+            count => vec![Fact::RefusedKeys { count }],
+        }
+    }
+
+    fn unlock(
+        &mut self,
+        person: &str,
+        passphrase: &str,
+        redraw: &mut Redraw<'_>,
+    ) -> Result<(), DayError> {
+        let path = job_folder::private_key(&self.ground.plan, &self.ground.plan_path, person);
+        let Some(path) = path else { return Ok(()) };
+        match self.keys.unlock(person, &path, Some(passphrase)) {
+            Ok(public) if self.is_the_key_of(person, &public) => {
+                match self.waiting_for_key.take() {
+                    Some(act) => self.act(act, redraw),
+                    None => Ok(()),
+                }
+            }
+            Ok(_) => {
+                self.keys.lock(person);
+                self.desk.say(format!(
+                    "not signed: {} is not the key the plan names",
+                    path.display()
+                ));
+                Ok(())
+            }
+            Err(error) => {
+                self.desk.say(format!("not signed: {error}"));
+                Ok(())
+            }
+        }
+    }
+
+    fn is_the_key_of(&self, person: &str, public: &PublicKey) -> bool {
+        let named = self
+            .ground
+            .crew
+            .iter()
+            .find(|c| c.id == person)
+            .and_then(|c| c.key.as_ref());
+        named.is_some_and(|key| key.fingerprint() == public.fingerprint())
+    }
+
+    fn act(&mut self, mut act: Act, redraw: &mut Redraw<'_>) -> Result<(), DayError> {
+        if self.on_paper {
+            self.desk.say("NOT RECORDED: go on on paper");
+            return Ok(());
+        }
+        if let Act::Confirm { nonce, .. } = &mut act {
+            *nonce = hex(&entropy::bytes::<16>()?);
+        }
+        let now = self.clock.now();
+        let event = Event::Act {
+            act: act.clone(),
+            now: Stamp {
+                utc_ms: now.utc_ms,
+                up_ms: now.up_ms,
+            },
+        };
+        let effects = match step(&self.session, &event) {
+            Ok(step) => step.effects,
+            Err(refusal) => {
+                self.desk.refused(refusal.to_string());
+                return Ok(());
+            }
+        };
+        if let Some(person) = self.locked_signer(&effects) {
+            self.waiting_for_key = Some(act);
+            self.desk.overlay = Overlay::Passphrase {
+                person,
+                typed: String::new(),
+            };
+            return Ok(());
+        }
+        let before = self.session.stage;
+        let held_before = self.session.held.is_some();
+        self.run(effects, redraw)?;
+        if let (Act::Confirm { typed, nonce, .. }, false, true) =
+            (&act, held_before, self.session.held.is_some())
+        {
+            self.desk.hold(typed, nonce.clone());
+        }
+        self.show_code(before, redraw)
+    }
+
+    /// The code is carried away after the briefing and after any bad result.
+    fn show_code(&mut self, before: Stage, redraw: &mut Redraw<'_>) -> Result<(), DayError> {
+        let briefed = before == Stage::Signing && self.session.stage == Stage::Choose;
+        let bad = self.session.done.last().is_some_and(|d| {
+            d.stage == Stage::AllClear
+                && d.item == "outcome"
+                && d.seq + 2 >= self.session.seq
+                && !matches!(
+                    d.values.first(),
+                    Some(crate::session::Value::Chosen { digit: 1, .. })
+                )
+        });
+        if !briefed && !(bad && before == Stage::AllClear) {
+            return Ok(());
+        }
+        let code = self.code.clone();
+        self.record_facts(vec![Fact::ReceiptShown { code }], redraw)?;
+        self.desk.overlay = Overlay::Receipt;
+        Ok(())
+    }
+
+    fn locked_signer(&self, effects: &[Effect]) -> Option<String> {
+        effects
+            .iter()
+            .flat_map(|effect| match effect {
+                Effect::Record(facts) => facts.as_slice(),
+                Effect::SizeUp { .. } => &[],
+            })
+            .find_map(|fact| match fact {
+                Fact::Answer(answer) => answer
+                    .signer
+                    .clone()
+                    .filter(|id| !self.keys.is_unlocked(id)),
+                _ => None,
+            })
+    }
+
+    /// Carries effects out until none is left.
+    fn run(&mut self, effects: Vec<Effect>, redraw: &mut Redraw<'_>) -> Result<(), DayError> {
+        let mut due: std::collections::VecDeque<Effect> = effects.into();
+        while let Some(effect) = due.pop_front() {
+            match effect {
+                Effect::Record(facts) => due.extend(self.record_facts(facts, redraw)?),
+                Effect::SizeUp {
+                    tree,
+                    because,
+                    measured,
+                } => {
+                    redraw(self);
+                    let card = Box::new(self.card(&tree, &measured));
+                    let sized = Event::SizedUp {
+                        tree,
+                        card,
+                        because,
+                    };
+                    if let Ok(step) = step(&self.session, &sized) {
+                        due.extend(step.effects);
+                    }
+                }
+            }
+        }
+        Ok(())
+    }
+
+    /// Draws RECORDING, writes, and only then folds the facts into the state.
+    fn record_facts(
+        &mut self,
+        facts: Vec<Fact>,
+        redraw: &mut Redraw<'_>,
+    ) -> Result<Vec<Effect>, DayError> {
+        if facts.is_empty() {
+            return Ok(vec![]);
+        }
+        let mut all = self.refused_keys();
+        all.extend(facts);
+        self.desk.recording = true;
+        redraw(self);
+        match self.write(all) {
+            Ok(effects) => {
+                self.desk.recorded(&self.session);
+                Ok(effects)
+            }
+            Err(RecordError::NotRecorded { seq, source }) => {
+                self.desk.recording = false;
+                self.not_recorded(seq, &source);
+                Ok(vec![])
+            }
+            Err(error) => Err(error.into()),
+        }
+    }
+
+    /// A failed write: the act is lost and said to be; the acknowledged lines go to a new file.
+    fn not_recorded(&mut self, seq: u64, source: &std::io::Error) {
+        let now = self.clock.now();
+        match self.record.rebuild(&now) {
+            Ok(line) => {
+                self.code = RecordCode::of(&line.hash).to_string();
+                self.desk.say(format!(
+                    "NOT RECORDED: entry {seq} ({source}). Goes on in {}. Do it again.",
+                    self.record.path().display()
+                ));
+            }
+            Err(_) => {
+                self.on_paper = true;
+                self.desk.say(format!(
+                    "NOT RECORDED: entry {seq} ({source}). Go on on paper. Code {}",
+                    self.code
+                ));
+            }
+        }
+    }
+
+    fn write(&mut self, facts: Vec<Fact>) -> Result<Vec<Effect>, RecordError> {
+        let stamp = self.clock.now();
+        let language = self.ground.parts.tailgate.language.clone();
+        let mut drafts: Vec<Draft> = self.clock_step(&stamp).into_iter().collect();
+        let ahead = drafts.len();
+        drafts.extend(facts.iter().map(|fact| facts::draft(fact, &language)));
+        let written = self.record.append(&drafts, &stamp, &self.keys)?;
+        if let Some(last) = written.last() {
+            self.code = last.code().to_string();
+        }
+        self.last_stamp = stamp;
+        let at = Stamp {
+            utc_ms: stamp.utc_ms,
+            up_ms: stamp.up_ms,
+        };
+        let place = |(fact, written): (Fact, &Written)| Recorded {
+            seq: written.entry.seq,
+            stamp: at.clone(),
+            fact,
+        };
+        let recorded: Vec<Recorded> = facts
+            .into_iter()
+            .zip(&written[ahead..])
+            .map(place)
+            .collect();
+        // Recorded facts are never refused: they have happened.
+        let Ok(step) = step(&self.session, &Event::Recorded(recorded)) else {
+            return Ok(vec![]);
+        };
+        self.session = step.next;
+        Ok(step.effects)
+    }
+
+    /// An entry where the wall clock moved against the running clock by more than two seconds and
+    /// what a clock may drift.
+    fn clock_step(&self, now: &FullStamp) -> Option<Draft> {
+        if now.boot != self.last_stamp.boot {
+            return None;
+        }
+        let ran = now.up_ms - self.last_stamp.up_ms;
+        let moved = now.utc_ms - self.last_stamp.utc_ms - ran;
+        let drift = 2_000 + ran.abs() * 600 / 1_000_000;
+        (moved.abs() > drift).then(|| {
+            let mut members = serde_json::Map::new();
+            members.insert("moved_ms".into(), moved.into());
+            Draft::unsigned("clock_step", members)
+        })
+    }
+}
+
+/// Unlocks the keys that need no passphrase, where their private half lies beside the plan.
+fn unlock_open_keys(ground: &Ground, keys: &mut KeyStore) -> Result<(), DayError> {
+    for member in &ground.crew {
+        let Some(path) = job_folder::private_key(&ground.plan, &ground.plan_path, &member.id)
+        else {
+            continue;
+        };
+        match keys.unlock(&member.id, &path, None) {
+            Ok(public) => {
+                let named = member.key.as_ref().map(PublicKey::fingerprint);
+                if named != Some(public.fingerprint()) {
+                    keys.lock(&member.id);
+                }
+            }
+            // Asked for when the person signs; a key that is elsewhere is said to be missing then.
+            Err(KeyError::PassphraseNeeded(_) | KeyError::File(_)) => {}
+            Err(error) => return Err(error.into()),
+        }
+    }
+    Ok(())
+}
+
+fn opening(ground: &Ground, stamp: FullStamp) -> Result<Opening, DayError> {
+    let hash = |text: &String| {
+        let mut bytes = [0_u8; 32];
+        for (byte, pair) in bytes.iter_mut().zip(text.as_bytes().chunks(2)) {
+            let digits = std::str::from_utf8(pair).unwrap_or("00");
+            *byte = u8::from_str_radix(digits, 16).unwrap_or(0);
+        }
+        bytes
+    };
+    let file_name = ground
+        .plan_path
+        .file_name()
+        .map_or(String::new(), |n| n.to_string_lossy().into_owned());
+    Ok(Opening {
+        record: entropy::bytes::<16>()?,
+        stamp,
+        job: ground.plan.job.name.value.clone(),
+        plan: ground.plan_bytes.clone(),
+        plan_name: file_name,
+        leader: ground.plan.job.leader.value.clone(),
+        crew: ground.crew.clone(),
+        parts: ground
+            .parts
+            .hashes
+            .iter()
+            .map(|(name, text)| (name.clone(), hash(text)))
+            .collect(),
+        program: format!("stumpside {}", env!("CARGO_PKG_VERSION")),
+        language: ground.parts.tailgate.language.clone(),
+        continues: None,
+    })
+}
+
+/// The state that the record's lines add up to.
+fn resumed(lines: &[ParsedLine], opening: &Opening, job: Arc<Job>) -> Result<Session, DayError> {
+    let first = lines.first().map(Roster::read);
+    if let Some(Ok(roster)) = first
+        && roster.plan_sha256 != opening.plan_sha256()
+    {
+        let short = |hash: &[u8; 32]| hex(hash)[..12].to_owned();
+        return Err(DayError::AnotherPlan {
+            recorded: short(&roster.plan_sha256),
+            here: short(&opening.plan_sha256()),
+        });
+    }
+    let void = cut_off(lines);
+    let mut all = vec![];
+    for line in lines
+        .iter()
+        .filter(|l| l.sig.is_none() && !void.contains(&l.seq))
+    {
+        match facts::fact(line) {
+            Some(recorded) => all.push(recorded),
+            None if matches!(line.kind.as_str(), "open" | "recover" | "clock_step") => {}
+            None => {
+                return Err(DayError::Unreadable {
+                    seq: line.seq,
+                    kind: line.kind.clone(),
+                });
+            }
+        }
+    }
+    Ok(replay(job, &all))
+}
