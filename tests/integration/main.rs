@@ -1,1 +1,8 @@
 //! One test binary: the house, the published checks, the kits, the session, the screens.
+
+mod record_desk;
+mod record_kit;
+mod record_format;
+mod record_durability;
+mod record_interop;
+mod commands_record;
