@@ -1,6 +1,7 @@
 //! One test binary: the house, the published checks, the kits, the session, the screens.
 
 mod record_desk;
+mod record_attacks;
 mod record_kit;
 mod record_format;
 mod record_durability;

@@ -98,6 +98,15 @@ pub struct Desk {
 
 impl Desk {
     pub fn open(crew: Vec<CrewMember>) -> Self {
+        Self::begin(crew, 0)
+    }
+
+    /// The usual crew under a wall clock that is wrong by so much.
+    pub fn open_shifted(shift_ms: i64) -> Self {
+        Self::begin(crew(), shift_ms)
+    }
+
+    fn begin(crew: Vec<CrewMember>, clock_shift_ms: i64) -> Self {
         let mut desk = Self {
             bytes: Vec::new(),
             next: Place {
@@ -106,7 +115,7 @@ impl Desk {
             },
             seeds: BTreeMap::from([("odile".to_owned(), 1), ("tamsin".to_owned(), 2)]),
             minute: 0,
-            clock_shift_ms: 0,
+            clock_shift_ms,
         };
         desk.write(&Draft::unsigned("open", opening(crew).members()));
         desk
