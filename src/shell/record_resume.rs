@@ -88,6 +88,7 @@ impl RecordFile {
             path: path.to_owned(),
             places: places.clone(),
             watermark,
+            roster,
             bytes,
             next,
             lost: None,

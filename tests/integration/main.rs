@@ -5,5 +5,6 @@ mod record_attacks;
 mod record_kit;
 mod record_format;
 mod record_durability;
+mod record_folder;
 mod record_interop;
 mod commands_record;

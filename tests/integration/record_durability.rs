@@ -14,24 +14,24 @@ use serde_json::json;
 use stumpside::record::duty::cut_off;
 use stumpside::record::{Draft, Options, Trust, Verdict, verify};
 use stumpside::shell::key_store::KeyStore;
-use stumpside::shell::record_file::{Places, RECORD_FILE, RecordError, RecordFile};
-use stumpside::shell::record_store::{FileStore, Media, Store};
+use stumpside::shell::record_file::{Places, RecordError, RecordFile};
+use stumpside::shell::record_store::{Media, Store};
 
 use crate::record_desk::{members, opening, person, stamp};
 
 /// A disk that keeps what was not synced apart, and fails when told.
 #[derive(Default)]
-struct Disk {
-    durable: Vec<u8>,
-    pending: Vec<u8>,
-    writes: usize,
-    syncs: usize,
-    write_fails_at: Option<usize>,
-    sync_fails_at: Option<usize>,
+pub struct Disk {
+    pub durable: Vec<u8>,
+    pub pending: Vec<u8>,
+    pub writes: usize,
+    pub syncs: usize,
+    pub write_fails_at: Option<usize>,
+    pub sync_fails_at: Option<usize>,
 }
 
 #[derive(Clone, Default)]
-struct FakeStore(Arc<Mutex<Disk>>);
+pub struct FakeStore(pub Arc<Mutex<Disk>>);
 
 impl Store for FakeStore {
     fn append(&mut self, bytes: &[u8]) -> io::Result<()> {
@@ -60,7 +60,7 @@ impl Store for FakeStore {
     fn reserve(&mut self, _end: usize) {}
 }
 
-fn nowhere() -> Places {
+pub fn nowhere() -> Places {
     Places {
         job: PathBuf::from("/nowhere"),
         second: None,
@@ -69,17 +69,8 @@ fn nowhere() -> Places {
     }
 }
 
-fn in_folder(dir: &Path) -> Places {
-    Places {
-        job: dir.join("job"),
-        second: None,
-        state: Some(dir.join("state")),
-        media: Media::LocalOnly,
-    }
-}
-
 /// Odile's key, unlocked from a file that is written for it.
-fn keys() -> KeyStore {
+pub fn keys() -> KeyStore {
     use ssh_key::{LineEnding, PrivateKey, private::Ed25519Keypair};
     let dir = tempfile::tempdir().unwrap();
     let path = dir.path().join("odile");
@@ -90,7 +81,7 @@ fn keys() -> KeyStore {
     keys
 }
 
-fn day() -> Vec<Draft> {
+pub fn day() -> Vec<Draft> {
     let present = members(json!({"who": "odile"}));
     let own = |kind: &str| Draft::signed(kind, members(json!({"who": "odile"})), "odile");
     vec![
@@ -103,7 +94,7 @@ fn day() -> Vec<Draft> {
     ]
 }
 
-fn one_person() -> stumpside::record::Opening {
+pub fn one_person() -> stumpside::record::Opening {
     opening(vec![person("odile", "leader", Some(1))])
 }
 
@@ -254,135 +245,6 @@ fn a_damaged_file_is_refused_and_never_mended() {
 }
 
 #[test]
-fn a_record_begins_with_everything_beside_it_and_is_held_alone() {
-    use std::os::unix::fs::PermissionsExt;
-    let dir = tempfile::tempdir().unwrap();
-    let places = in_folder(dir.path());
-    let (mut record, first) = RecordFile::create(&places, &one_person()).unwrap();
-    assert_eq!(first.entry.kind, "open");
-    let plan = places.job.join(format!(
-        "plan.{}.yaml",
-        first.entry.text("plan_sha256").unwrap()
-    ));
-    assert_eq!(std::fs::read(plan).unwrap(), crate::record_desk::PLAN);
-    assert!(places.job.join("allowed_signers").exists());
-    let mode = std::fs::metadata(&places.job).unwrap().permissions().mode();
-    assert_eq!(mode & 0o777, 0o700);
-    assert!(matches!(
-        RecordFile::create(&places, &one_person()),
-        Err(RecordError::Exists(_))
-    ));
-    assert!(matches!(
-        RecordFile::resume(&places, &stamp(1)),
-        Err(RecordError::Locked(_))
-    ));
-    let keys = keys();
-    record.append(&day()[..2], &stamp(1), &keys).unwrap();
-    drop(record);
-    let (record, lines) = RecordFile::resume(&places, &stamp(2)).unwrap();
-    let kinds: Vec<&str> = lines.iter().map(|line| line.kind.as_str()).collect();
-    assert_eq!(kinds, ["open", "present", "brief_signed", "sig"]);
-    assert_eq!(std::fs::read(record.path()).unwrap(), record.bytes());
-}
-
-#[test]
-fn an_older_copy_put_back_is_refused_on_the_same_laptop() {
-    let dir = tempfile::tempdir().unwrap();
-    let places = in_folder(dir.path());
-    let (mut record, _) = RecordFile::create(&places, &one_person()).unwrap();
-    let keys = keys();
-    let path = places.job.join(RECORD_FILE);
-    record.append(&day()[..1], &stamp(1), &keys).unwrap();
-    let older = std::fs::read(&path).unwrap();
-    record.append(&day()[1..2], &stamp(2), &keys).unwrap();
-    drop(record);
-    let newer = std::fs::read(&path).unwrap();
-    std::fs::write(&path, &older).unwrap();
-    let outcome = RecordFile::resume(&places, &stamp(3));
-    assert!(matches!(outcome, Err(RecordError::Refused { why, .. }) if why.contains("older copy")));
-    let mut last_changed = newer.clone();
-    let at = newer.len() - 10;
-    last_changed[at] = if newer[at] == b'A' { b'B' } else { b'A' };
-    std::fs::write(&path, &last_changed).unwrap();
-    let outcome = RecordFile::resume(&places, &stamp(3));
-    assert!(
-        matches!(outcome, Err(RecordError::Refused { why, .. }) if why.contains("another copy"))
-    );
-    std::fs::write(&path, &newer).unwrap();
-    assert!(RecordFile::resume(&places, &stamp(3)).is_ok());
-}
-
-#[test]
-fn a_link_in_place_of_the_record_is_not_followed() {
-    let dir = tempfile::tempdir().unwrap();
-    let places = in_folder(dir.path());
-    drop(RecordFile::create(&places, &one_person()).unwrap());
-    let path = places.job.join(RECORD_FILE);
-    let elsewhere = dir.path().join("elsewhere.jsonl");
-    std::fs::rename(&path, &elsewhere).unwrap();
-    std::os::unix::fs::symlink(&elsewhere, &path).unwrap();
-    assert!(matches!(
-        RecordFile::resume(&places, &stamp(1)),
-        Err(RecordError::File(_))
-    ));
-}
-
-#[test]
-fn a_full_disk_is_told_at_once_and_the_record_goes_on_elsewhere() {
-    let full = Path::new("/dev/full");
-    let store = FileStore::open(full).unwrap();
-    let outcome = RecordFile::begin(Box::new(store), (&nowhere(), full), &one_person());
-    let Err(RecordError::NotRecorded { seq: 0, source }) = outcome else {
-        panic!("a full disk took the first line");
-    };
-    assert_eq!(source.kind(), io::ErrorKind::StorageFull);
-}
-
-#[test]
-fn a_rebuilt_record_stands_in_a_second_file_and_is_the_one_that_goes_on() {
-    let dir = tempfile::tempdir().unwrap();
-    let places = in_folder(dir.path());
-    let keys = keys();
-    let store = FakeStore::default();
-    store.0.lock().unwrap().write_fails_at = Some(3);
-    std::fs::create_dir_all(&places.job).unwrap();
-    let path = places.job.join(RECORD_FILE);
-    let (mut record, _) =
-        RecordFile::begin(Box::new(store.clone()), (&places, &path), &one_person()).unwrap();
-    record.append(&day()[..1], &stamp(1), &keys).unwrap();
-    let lost = record.append(&day()[1..2], &stamp(2), &keys);
-    let Err(RecordError::NotRecorded { seq: 2, .. }) = lost else {
-        panic!("the write did not fail")
-    };
-    let disk = store.0.lock().unwrap();
-    std::fs::write(&path, [disk.durable.as_slice(), &disk.pending].concat()).unwrap();
-    drop(disk);
-    let outcome = RecordFile::resume(&places, &stamp(3));
-    assert!(
-        matches!(outcome, Err(RecordError::Refused { why, .. }) if why.contains("since the machine was started")),
-    );
-    let line = record.rebuild(&stamp(3)).unwrap();
-    assert_eq!(line.members["error_number"], 28);
-    assert_eq!(record.path().file_name().unwrap(), "record-2.jsonl");
-    record.append(&day()[1..2], &stamp(4), &keys).unwrap();
-    drop(record);
-    let (record, lines) = RecordFile::resume(&places, &stamp(5)).unwrap();
-    assert_eq!(record.path().file_name().unwrap(), "record-2.jsonl");
-    let kinds: Vec<&str> = lines.iter().map(|line| line.kind.as_str()).collect();
-    assert_eq!(kinds, ["open", "present", "recover", "brief_signed", "sig"]);
-    drop(record);
-    std::fs::write(
-        places.job.join("record-3.jsonl"),
-        crate::record_desk::small_day(),
-    )
-    .unwrap();
-    assert!(matches!(
-        RecordFile::resume(&places, &stamp(6)),
-        Err(RecordError::Fork(_, _))
-    ));
-}
-
-#[test]
 fn without_the_key_nothing_is_written_and_the_file_lives_on() {
     let store = FakeStore::default();
     let mut record = begin(&store).unwrap();
@@ -397,6 +259,68 @@ fn without_the_key_nothing_is_written_and_the_file_lives_on() {
     ));
     assert_eq!(store.0.lock().unwrap().durable, before);
     record.append(&day()[..1], &stamp(2), &locked).unwrap();
+}
+
+#[test]
+fn what_would_make_the_record_fail_is_not_taken() {
+    use stumpside::record::draft::DutyFault;
+    let store = FakeStore::default();
+    let crew = vec![
+        person("odile", "leader", Some(1)),
+        person("tamsin", "sawyer", Some(2)),
+        person("rui", "spotter", None),
+    ];
+    let path = Path::new("/nowhere/record.jsonl");
+    let ground = (&nowhere(), path);
+    let (mut record, _) =
+        RecordFile::begin(Box::new(store.clone()), ground, &opening(crew)).unwrap();
+    let keys = keys();
+    let own = |kind: &str, who: &str, signer: &str| {
+        Draft::signed(kind, members(json!({"who": who})), signer)
+    };
+    let named = |kind: &str, who: &str, leader: &str| {
+        Draft::named_by(kind, members(json!({"who": who})), leader)
+    };
+    let mut fault = |drafts: &[Draft]| match record.append(drafts, &stamp(1), &keys) {
+        Err(RecordError::Duty(fault)) => Some(fault),
+        Ok(_) | Err(_) => None,
+    };
+    assert_eq!(
+        fault(&[own("go", "rui", "rui")]),
+        Some(DutyFault::NoKey("rui".into()))
+    );
+    let not_own = fault(&[own("sign_out", "tamsin", "odile")]);
+    assert!(matches!(not_own, Some(DutyFault::NotOwn { .. })));
+    let not_leader = fault(&[own("close", "tamsin", "tamsin")]);
+    assert!(matches!(not_leader, Some(DutyFault::NotLeader { .. })));
+    assert!(matches!(
+        fault(&[named("go", "rui", "tamsin")]),
+        Some(DutyFault::NotLeader { .. })
+    ));
+    assert_eq!(
+        fault(&[named("go", "tamsin", "odile")]),
+        Some(DutyFault::HasKey("tamsin".into()))
+    );
+    let behind = [
+        own("close", "odile", "odile"),
+        own("sign_out", "odile", "odile"),
+    ];
+    assert_eq!(fault(&behind), Some(DutyFault::BehindClose));
+    let mut strange = KeyStore::default();
+    let dir = tempfile::tempdir().unwrap();
+    let new = stumpside::shell::key_store::NewKey {
+        id: "odile",
+        comment: "",
+        passphrase: None,
+    };
+    stumpside::shell::key_store::make(dir.path(), new).unwrap();
+    strange
+        .unlock("odile", &dir.path().join("keys/odile"), None)
+        .unwrap();
+    let outcome = record.append(&[own("go", "odile", "odile")], &stamp(1), &strange);
+    assert!(matches!(outcome, Err(RecordError::WrongKey(id)) if id == "odile"));
+    assert_eq!(record.next_seq(), 1, "nothing was written");
+    assert_eq!(store.0.lock().unwrap().writes, 1);
 }
 
 #[test]

@@ -99,6 +99,36 @@ fn the_stock_verifier_accepts_every_signature_of_a_day() {
 }
 
 #[test]
+fn the_page_of_the_format_checks_a_record_by_hand() {
+    let page = include_str!("../../src/record/FORMAT.md");
+    let blocks: Vec<&str> = page.split("```\n").skip(1).step_by(2).collect();
+    let dir = tempfile::tempdir().unwrap();
+    std::fs::write(
+        dir.path().join("allowed_signers"),
+        signers::write(&office_list()),
+    )
+    .unwrap();
+    std::fs::write(dir.path().join("record.jsonl"), whole_day().bytes).unwrap();
+    let by_hand = |block: &str| {
+        let script = format!("cd '{}' && {block}", dir.path().display());
+        let done = tool("bash", &["-c", &script], b"");
+        (
+            done.status.success(),
+            String::from_utf8(done.stdout).unwrap(),
+        )
+    };
+    let (_, chain) = by_hand(blocks[0]);
+    let hash = chain.split_whitespace().next().unwrap();
+    assert!(chain.contains(&format!("\"prev\":\"{hash}\"")), "{chain}");
+    assert!(by_hand(blocks[1]).0);
+    let changed = String::from_utf8(whole_day().bytes)
+        .unwrap()
+        .replace("sawyer", "Sawyer");
+    std::fs::write(dir.path().join("record.jsonl"), changed).unwrap();
+    assert!(!by_hand(blocks[1]).0);
+}
+
+#[test]
 fn sha256sum_gives_the_prev_of_every_next_line() {
     let whole = whole_day().bytes;
     let lines: Vec<&[u8]> = whole.split_inclusive(|b| *b == b'\n').collect();
