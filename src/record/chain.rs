@@ -264,27 +264,20 @@ impl Walker<'_> {
         }
     }
 
-    /// The number fits but the hash of the line before does not: one of the two was changed.
+    /// The number fits but the hash of the line before does not: one of the two was changed, or both.
     fn blame_link(&mut self, n: usize, entry: u64) {
-        let before = self.stands.last().copied();
-        let before_unread = before.is_some_and(|(b, _, _)| self.pieces[b].read.is_err());
-        let own_fault = match self.pieces.get(n + 1) {
-            Some(next) => next
-                .line()
-                .is_some_and(|line| line.prev != self.pieces[n].hash),
-            None => before.is_some_and(|(b, _, _)| self.signature_holds(n, b)),
-        };
-        match before {
+        match self.stands.last().copied() {
             None => self.say(
                 entry,
                 "it does not begin a record: \"prev\" is not 64 zeros",
             ),
-            Some(_) if before_unread => {}
-            Some(_) if own_fault => self.say(
-                entry,
-                "it was changed: its \"prev\" is not the hash of the entry before it, \
-                 which cannot be vouched for from here",
-            ),
+            Some((before, _, _)) if self.pieces[before].read.is_err() => {}
+            Some((before, _, _)) if self.only_link_changed(n, before) => {
+                self.say(
+                    entry,
+                    "it was changed: its \"prev\" is not the hash of the entry before it",
+                );
+            }
             Some((_, changed, _)) => {
                 self.say(
                     changed,
@@ -296,6 +289,24 @@ impl Walker<'_> {
             }
         }
         self.stand(n, entry);
+    }
+
+    /// Whether the line before is as it was: with its hash put back, this line is the one the next
+    /// line holds, or this line is a signature that still fits the line before.
+    fn only_link_changed(&self, n: usize, before: usize) -> bool {
+        let Some(next) = self.pieces.get(n + 1) else {
+            return self.signature_holds(n, before);
+        };
+        let text = &self.bytes[self.pieces[n].range.clone()];
+        let Some(line) = self.pieces[n].line() else {
+            return false;
+        };
+        let Ok(text) = std::str::from_utf8(text) else {
+            return false;
+        };
+        let mended = text.replacen(&hex(&line.prev), &hex(&self.pieces[before].hash), 1);
+        let mended: [u8; 32] = Sha256::digest(mended.as_bytes()).into();
+        next.line().is_some_and(|next| next.prev == mended)
     }
 
     fn say(&mut self, entry: u64, why: &str) {

@@ -73,7 +73,7 @@ pub fn square(hash: &[u8; 32], ink: Ink) -> Vec<String> {
     let Ok(code) = QrCode::with_error_correction_level(hex(hash), EcLevel::M) else {
         return Vec::new();
     };
-    const BORDER: usize = 2;
+    const BORDER: usize = 4;
     let width = code.width();
     let colours = code.to_colors();
     let dark = |row: usize, column: usize| {

@@ -3,8 +3,9 @@
 
 use serde_json::{Map, Value};
 
-use super::kind::needs_signer;
+use super::kind::{Seal, find, needs_signer};
 use super::line::{self, LineFault, ParsedLine, Place, Sig, Stamp};
+use super::opening::Roster;
 use super::{BATCH_BYTES_MAX, code::RecordCode};
 
 /// One act to be written.
@@ -77,6 +78,113 @@ impl Written {
     pub fn code(&self) -> RecordCode {
         RecordCode::of(self.hash())
     }
+}
+
+/// Why an act would make the record fail or stay open, so that it is not taken.
+#[derive(Debug, Clone, PartialEq, Eq, thiserror::Error)]
+pub enum DutyFault {
+    /// The signer has no key in the record's first line.
+    #[error("{0} has no key in this record")]
+    NoKey(String),
+    /// Each person signs this for themselves.
+    #[error("an entry \"{kind}\" of {who} is signed by {who}, not by {signer}")]
+    NotOwn {
+        /// The kind of entry.
+        kind: String,
+        /// Whose act it is.
+        who: String,
+        /// Who would sign.
+        signer: String,
+    },
+    /// Only the leader does this.
+    #[error("only the leader, {leader}, can do this: {what}")]
+    NotLeader {
+        /// The leader's crew id.
+        leader: String,
+        /// What.
+        what: &'static str,
+    },
+    /// Someone with a key signs for themselves.
+    #[error("{0} has a key and must sign")]
+    HasKey(String),
+    /// Something would stand behind the close.
+    #[error("nothing goes behind the close")]
+    BehindClose,
+}
+
+/// Says whether drafts may stand in the record that begins with this roster.
+///
+/// # Errors
+/// [`DutyFault`] with the first that may not.
+pub fn check_duty(drafts: &[Draft], roster: &Roster) -> Result<(), DutyFault> {
+    for (n, draft) in drafts.iter().enumerate() {
+        let who = draft
+            .members
+            .get("who")
+            .and_then(Value::as_str)
+            .unwrap_or_default();
+        let seal = find(&draft.kind).map_or(Seal::Free, |kind| kind.seal);
+        match &draft.signer {
+            Some(signer) => check_signer(draft, (who, signer, seal), roster)?,
+            None if draft.members.contains_key("named_by") => check_named(draft, who, roster)?,
+            None => {}
+        }
+        if draft.kind == "close" && n + 1 < drafts.len() {
+            return Err(DutyFault::BehindClose);
+        }
+    }
+    Ok(())
+}
+
+fn check_signer(
+    draft: &Draft,
+    (who, signer, seal): (&str, &str, Seal),
+    roster: &Roster,
+) -> Result<(), DutyFault> {
+    if !has_key(roster, signer) {
+        return Err(DutyFault::NoKey(signer.to_owned()));
+    }
+    match seal {
+        Seal::EachPresent if who != signer => Err(DutyFault::NotOwn {
+            kind: draft.kind.clone(),
+            who: who.to_owned(),
+            signer: signer.to_owned(),
+        }),
+        Seal::Leader if signer != roster.leader => Err(DutyFault::NotLeader {
+            leader: roster.leader.clone(),
+            what: "close the record",
+        }),
+        Seal::Free | Seal::Person | Seal::EachPresent | Seal::Leader => Ok(()),
+    }
+}
+
+fn check_named(draft: &Draft, who: &str, roster: &Roster) -> Result<(), DutyFault> {
+    if draft.kind == "close" {
+        let what = "close the record, with a key";
+        return Err(DutyFault::NotLeader {
+            leader: roster.leader.clone(),
+            what,
+        });
+    }
+    if draft.members.get("named_by").and_then(Value::as_str) != Some(&roster.leader) {
+        let what = "name a person without a key";
+        return Err(DutyFault::NotLeader {
+            leader: roster.leader.clone(),
+            what,
+        });
+    }
+    if has_key(roster, who) {
+        Err(DutyFault::HasKey(who.to_owned()))
+    } else {
+        Ok(())
+    }
+}
+
+fn has_key(roster: &Roster, id: &str) -> bool {
+    roster
+        .people
+        .get(id)
+        .is_some_and(|person| person.fingerprint.is_some())
 }
 
 /// Why a batch cannot be written. Nothing of it was.

@@ -21,7 +21,7 @@ pub mod verify;
 pub use draft::Draft;
 pub use line::{Boot, ParsedLine, Stamp};
 pub use opening::{CrewMember, Opening};
-pub use verify::{Options, Report, Trust, Verdict, verify};
+pub use verify::{Options, Report, Trust, Verdict, verify, verify_many};
 
 /// The namespace of every signature in a record.
 pub const NAMESPACE: &str = "stumpside-record-v1";

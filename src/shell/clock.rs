@@ -48,3 +48,21 @@ impl Clock {
 fn milliseconds(at: &Timespec) -> i64 {
     at.tv_sec * 1000 + at.tv_nsec / 1_000_000
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn the_clocks_of_one_start_run_forwards_together() {
+        let clock = Clock::start().unwrap();
+        let (first, then) = (clock.now(), clock.now());
+        assert_eq!(first.boot, then.boot);
+        assert!(first.up_ms > 0 && then.up_ms >= first.up_ms);
+        assert!(first.off_min.abs() <= 18 * 60);
+        assert_eq!(
+            crate::record::line::read_utc(&first.utc()),
+            Some(first.utc_ms)
+        );
+    }
+}

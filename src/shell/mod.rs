@@ -7,6 +7,7 @@ pub mod clock;
 pub mod passphrase;
 pub mod key_store;
 pub mod watermark;
+pub mod record_error;
 pub mod record_store;
 pub mod record_file;
 pub mod record_resume;

@@ -2,17 +2,18 @@
 //! After any error of write or sync the file is dead for this start of the machine: never retried,
 //! never read back; the acknowledged lines go from memory into a new file.
 
-use std::io;
 use std::path::{Path, PathBuf};
 
-use super::files::{self, FileError, Readers};
-use super::key_store::{KeyError, KeyStore};
+use super::files::{self, Readers};
+use super::key_store::KeyStore;
+pub use super::record_error::RecordError;
 use super::record_store::{FileStore, Media, Store, check_media, keep_reserve, spend_reserve};
 use super::watermark::{Watermark, default_dir};
-use crate::record::draft::{DraftFault, Written, after, encode_batch};
+use crate::record::draft::{Written, after, check_duty, encode_batch};
 use crate::record::kind::kept_for_the_end;
-use crate::record::line::{Boot, LineFault, ParsedLine, Place, hex};
-use crate::record::opening::Opening;
+use crate::record::line::{self, Boot, ParsedLine, Place, hex};
+use crate::record::opening::{Opening, Roster};
+use crate::record::public_key::PublicKey;
 use crate::record::signers;
 use crate::record::{Draft, LINES_MAX, RECORD_BYTES_MAX, Stamp};
 
@@ -50,74 +51,13 @@ impl Places {
     }
 }
 
-/// Why something could not be recorded.
-#[derive(Debug, thiserror::Error)]
-pub enum RecordError {
-    /// The write or the sync failed. The act is not in the record.
-    #[error("NOT RECORDED: entry {seq}: {source}")]
-    NotRecorded {
-        /// The entry that is lost.
-        seq: u64,
-        /// What the system says.
-        source: io::Error,
-    },
-    /// An earlier write failed; the file takes nothing more in this start of the machine.
-    #[error("NOT RECORDED: an earlier write to {} failed; rebuild the record first", .0.display())]
-    Dead(PathBuf),
-    /// A record is there already.
-    #[error("{}: there is a record already", .0.display())]
-    Exists(PathBuf),
-    /// There is none.
-    #[error("{}: there is no record here", .0.display())]
-    NoRecord(PathBuf),
-    /// Another program has it open.
-    #[error("{}: another program holds the record open", .0.display())]
-    Locked(PathBuf),
-    /// The medium only reads.
-    #[error("{}: the medium is read-only; the record can be verified there, not continued", .0.display())]
-    ReadOnly(PathBuf),
-    /// A network or user-space file system.
-    #[error("{}: lies on {what}, where a sync is somebody else's word; choose a folder on this machine", dir.display())]
-    Remote {
-        /// The folder.
-        dir: PathBuf,
-        /// The kind of file system.
-        what: &'static str,
-    },
-    /// The leader closed it.
-    #[error("the record is closed; nothing goes behind its close")]
-    Closed,
-    /// The last tenth is kept for stop and close.
-    #[error("the record is nearly full; only stop, sign-out and close are taken now")]
-    NearlyFull,
-    /// The draft breaks the format or cannot be signed.
-    #[error(transparent)]
-    Draft(#[from] DraftFault<KeyError>),
-    /// A line cannot be written.
-    #[error("the entry cannot stand in the record: {0}")]
-    Line(#[from] LineFault),
-    /// What is there is not plainly a torn last write.
-    #[error("{}: not continued: {why}", path.display())]
-    Refused {
-        /// Which file.
-        path: PathBuf,
-        /// Why.
-        why: String,
-    },
-    /// Two files that are not one record.
-    #[error("{} and {} are two different continuations; a person must decide", .0.display(), .1.display())]
-    Fork(PathBuf, PathBuf),
-    /// A file beside the record.
-    #[error(transparent)]
-    File(#[from] FileError),
-}
-
 /// A record open for writing.
 pub struct RecordFile {
     pub(super) store: Box<dyn Store>,
     pub(super) path: PathBuf,
     pub(super) places: Places,
     pub(super) watermark: Option<Watermark>,
+    pub(super) roster: Roster,
     /// All acknowledged bytes.
     pub(super) bytes: Vec<u8>,
     /// Where the next line goes.
@@ -142,10 +82,11 @@ impl RecordFile {
         files::make_dir(&places.job)?;
         check_media(&places.job, places.media)?;
         let path = places.job.join(RECORD_FILE);
-        if files::names(&places.job)?
-            .iter()
-            .any(|name| is_record_name(name))
-        {
+        let names = files::names(&places.job)?;
+        let there: Vec<&String> = names.iter().filter(|name| is_record_name(name)).collect();
+        // A file that never got its first line is no record yet: it was never acknowledged.
+        let unbegun = there == [RECORD_FILE] && files::read_limited(&path, 0).is_ok();
+        if !there.is_empty() && !unbegun {
             return Err(RecordError::Exists(path));
         }
         let plan = places
@@ -158,7 +99,12 @@ impl RecordFile {
             files::write_or_same(&list, crew.as_bytes(), Readers::Everyone)?;
         }
         keep_reserve(&places.job);
-        let store = Box::new(FileStore::create(&path)?);
+        let store = if unbegun {
+            FileStore::open(&path)?
+        } else {
+            FileStore::create(&path)?
+        };
+        let store = Box::new(store);
         let begun = Self::begin(store, (places, &path), opening)?;
         sync_with_parent(&places.job)?;
         Ok(begun)
@@ -173,11 +119,18 @@ impl RecordFile {
         (places, path): (&Places, &Path),
         opening: &Opening,
     ) -> Result<(Self, Written), RecordError> {
+        let place = Place {
+            seq: 0,
+            prev: [0; 32],
+        };
+        let line = line::encode(place, &opening.stamp, "open", &opening.members())?;
+        let roster = Roster::read(&line::parse(&line)?)?;
         let mut record = Self {
             store,
             path: path.to_owned(),
             places: places.clone(),
             watermark: places.watermark(&opening.record),
+            roster,
             bytes: Vec::new(),
             next: Place {
                 seq: 0,
@@ -209,6 +162,8 @@ impl RecordFile {
         if self.closed {
             return Err(RecordError::Closed);
         }
+        check_duty(drafts, &self.roster)?;
+        self.check_keys(drafts, keys)?;
         let mut sign = |id: &str, bytes: &[u8]| keys.sign(id, bytes);
         let batch = encode_batch(self.next, stamp, drafts, &mut sign)?;
         self.check_room(drafts, batch.bytes.len())?;
@@ -222,6 +177,18 @@ impl RecordFile {
             self.note_watermark();
         }
         Ok(batch.written)
+    }
+
+    fn check_keys(&self, drafts: &[Draft], keys: &KeyStore) -> Result<(), RecordError> {
+        for signer in drafts.iter().filter_map(|draft| draft.signer.as_deref()) {
+            let begun_with = self.roster.people.get(signer);
+            let begun_with = begun_with.and_then(|person| person.fingerprint.as_deref());
+            let unlocked = keys.public(signer).map(PublicKey::fingerprint);
+            if unlocked.is_some() && unlocked.as_deref() != begun_with {
+                return Err(RecordError::WrongKey(signer.to_owned()));
+            }
+        }
+        Ok(())
     }
 
     fn check_room(&self, drafts: &[Draft], more: usize) -> Result<(), RecordError> {
@@ -324,8 +291,8 @@ impl RecordFile {
         members.insert("how".into(), "rebuilt".into());
         members.insert("error_number".into(), lost.error_number.into());
         members.insert("lost_seq".into(), lost.seq.into());
-        let bytes = crate::record::line::encode(self.next, stamp, "recover", &members)?;
-        let line = crate::record::line::parse(&bytes)?;
+        let bytes = line::encode(self.next, stamp, "recover", &members)?;
+        let line = line::parse(&bytes)?;
         let mut all = self.bytes.clone();
         all.extend_from_slice(&bytes);
         let seq = line.seq;

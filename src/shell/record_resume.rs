@@ -88,6 +88,7 @@ impl RecordFile {
             path: path.to_owned(),
             places: places.clone(),
             watermark,
+            roster,
             bytes,
             next,
             lost: None,
@@ -288,5 +289,13 @@ fn goes_on_from(newer: &[u8], older: &[u8]) -> bool {
         .unwrap_or_default();
     let rebuilt = line::parse(next)
         .is_ok_and(|line| line.kind == "recover" && line.text("how") == Some("rebuilt"));
-    rebuilt && older.len() - start <= BATCH_BYTES_MAX
+    rebuilt && one_write(&older[start..])
+}
+
+/// Whether bytes can be what one unacknowledged write left: not too many, and of one moment.
+fn one_write(bytes: &[u8]) -> bool {
+    let lines = bytes.split_inclusive(|byte| *byte == b'\n');
+    let mut stamps = lines.filter_map(|line| line::parse(line).ok()?.stamp);
+    let first = stamps.next();
+    bytes.len() <= BATCH_BYTES_MAX && stamps.all(|stamp| Some(stamp) == first)
 }

@@ -10,7 +10,7 @@ use std::sync::atomic::AtomicBool;
 use rustix::fs::{FallocateFlags, fallocate, fstatfs};
 
 use super::files::{self, FileError, Readers};
-use super::record_file::RecordError;
+use super::record_error::RecordError;
 
 /// A place that holds appended bytes.
 pub trait Store: Send {

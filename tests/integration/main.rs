@@ -2,3 +2,11 @@
 
 mod support;
 mod session;
+mod record_desk;
+mod record_attacks;
+mod record_kit;
+mod record_format;
+mod record_durability;
+mod record_folder;
+mod record_interop;
+mod commands_record;
