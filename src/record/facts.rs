@@ -14,8 +14,26 @@ use crate::session::{
 
 type Members = Map<String, Json>;
 
-/// The draft of a fact. `language` is the language of the texts shown.
+/// The draft of a fact, its texts in the form a record takes. `language` is the language of the
+/// texts shown.
 pub fn draft(fact: &Fact, language: &str) -> Draft {
+    let mut draft = as_said(fact, language);
+    for value in draft.members.values_mut() {
+        clean(value);
+    }
+    draft
+}
+
+fn clean(json: &mut Json) {
+    match json {
+        Json::String(said) => *said = super::text::clean(said),
+        Json::Array(items) => items.iter_mut().for_each(clean),
+        Json::Object(members) => members.values_mut().for_each(clean),
+        Json::Null | Json::Bool(_) | Json::Number(_) => {}
+    }
+}
+
+fn as_said(fact: &Fact, language: &str) -> Draft {
     let mut m = Members::new();
     let kind = match fact {
         Fact::Answer(answer) => return answer_draft(answer, language),
@@ -111,7 +129,8 @@ pub fn draft(fact: &Fact, language: &str) -> Draft {
             put(&mut m, "to", to);
             "hand_over"
         }
-        Fact::ReceiptShown { code } => {
+        Fact::ReceiptShown { shown_seq, code } => {
+            m.insert("shown_seq".into(), (*shown_seq).into());
             put(&mut m, "code", code);
             "receipt_shown"
         }
@@ -393,6 +412,7 @@ fn read(kind: &str, m: &Members) -> Option<Fact> {
         },
         "hand_over" => Fact::HandOver { to: text("to")? },
         "receipt_shown" => Fact::ReceiptShown {
+            shown_seq: u64::try_from(whole("shown_seq")?).ok()?,
             code: text("code")?,
         },
         other => return answer_in(other, m).map(|a| Fact::Answer(Box::new(a))),

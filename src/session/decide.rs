@@ -42,11 +42,6 @@ pub enum Act {
         /// To whom.
         to: String,
     },
-    /// The record's code shown.
-    ShowReceipt {
-        /// The code.
-        code: String,
-    },
     /// Keys refused so far.
     RefusedKeys {
         /// How many.
@@ -148,9 +143,6 @@ pub fn decide(session: &Session, act: &Act, now: &Stamp) -> Result<Vec<Fact>, Re
     if let Act::RefusedKeys { count } = act {
         return Ok(vec![Fact::RefusedKeys { count: *count }]);
     }
-    if let Act::ShowReceipt { code } = act {
-        return Ok(vec![Fact::ReceiptShown { code: code.clone() }]);
-    }
     if session.stage == Stage::Closed {
         return Err(Refusal::Closed);
     }
@@ -177,7 +169,7 @@ pub fn decide(session: &Session, act: &Act, now: &Stamp) -> Result<Vec<Fact>, Re
             }
             Ok(vec![Fact::HandOver { to: to.clone() }])
         }
-        Act::ShowReceipt { .. } | Act::RefusedKeys { .. } => Ok(vec![]),
+        Act::RefusedKeys { .. } => Ok(vec![]),
     }
 }
 
@@ -199,7 +191,6 @@ fn in_stretch(session: &Session, act: &Act, now: &Stamp) -> Result<Vec<Fact>, Re
         | Act::KeepPlace
         | Act::LoseLook
         | Act::HandOver { .. }
-        | Act::ShowReceipt { .. }
         | Act::RefusedKeys { .. } => return Err(Refusal::InStretch),
     };
     let said = Said {

@@ -285,6 +285,8 @@ pub enum Fact {
     Reopened,
     /// The record's code shown to the crew.
     ReceiptShown {
+        /// The entry whose code it is.
+        shown_seq: u64,
         /// The code.
         code: String,
     },

@@ -98,6 +98,7 @@ pub struct Day {
     /// What is half typed.
     pub desk: Desk,
     code: String,
+    code_seq: u64,
     waiting_for_key: Option<Act>,
     last_refused_ms: Option<i64>,
     last_stamp: FullStamp,
@@ -124,14 +125,18 @@ impl Day {
         let mut keys = KeyStore::default();
         unlock_open_keys(&ground, &mut keys)?;
         let opening = opening(&ground, now)?;
-        let (record, written, session) = match RecordFile::create(&ground.places, &opening) {
-            Ok((record, first)) => (record, first.code(), Session::new(job)),
+        let (record, (code, code_seq), session) = match RecordFile::create(&ground.places, &opening)
+        {
+            Ok((record, first)) => (record, (first.code(), first.last_seq()), Session::new(job)),
             Err(RecordError::Exists(_)) => {
                 let (record, lines) = RecordFile::resume(&ground.places, &now)?;
-                let code = lines
-                    .last()
-                    .map_or_else(|| RecordCode::of(&[0; 32]), |l| RecordCode::of(&l.hash));
-                (record, code, resumed(&lines, &opening, job)?)
+                let last = lines.last();
+                let code = last.map_or(([0; 32], 0), |l| (l.hash, l.seq));
+                (
+                    record,
+                    (RecordCode::of(&code.0), code.1),
+                    resumed(&lines, &opening, job)?,
+                )
             }
             Err(error) => return Err(error.into()),
         };
@@ -142,7 +147,8 @@ impl Day {
             clock,
             session,
             desk: Desk::default(),
-            code: written.to_string(),
+            code: code.to_string(),
+            code_seq,
             waiting_for_key: None,
             last_refused_ms: None,
             last_stamp: now,
@@ -355,7 +361,13 @@ impl Day {
             return Ok(());
         }
         let code = self.code.clone();
-        self.record_facts(vec![Fact::ReceiptShown { code }], redraw)?;
+        self.record_facts(
+            vec![Fact::ReceiptShown {
+                shown_seq: self.code_seq,
+                code,
+            }],
+            redraw,
+        )?;
         self.desk.overlay = Overlay::Receipt;
         Ok(())
     }
@@ -436,6 +448,7 @@ impl Day {
         match self.record.rebuild(&now) {
             Ok(line) => {
                 self.code = RecordCode::of(&line.hash).to_string();
+                self.code_seq = line.seq;
                 self.desk.say(format!(
                     "NOT RECORDED: entry {seq} ({source}). Goes on in {}. Do it again.",
                     self.record.path().display()
@@ -460,16 +473,20 @@ impl Day {
         let written = self.record.append(&drafts, &stamp, &self.keys)?;
         if let Some(last) = written.last() {
             self.code = last.code().to_string();
+            self.code_seq = last.last_seq();
         }
         self.last_stamp = stamp;
         let at = Stamp {
             utc_ms: stamp.utc_ms,
             up_ms: stamp.up_ms,
         };
-        let place = |(fact, written): (Fact, &Written)| Recorded {
-            seq: written.entry.seq,
-            stamp: at.clone(),
-            fact,
+        // The state is folded from the entry as it stands on disk, so that live equals replayed.
+        let place = |(fact, written): (Fact, &Written)| {
+            facts::fact(&written.entry).unwrap_or(Recorded {
+                seq: written.entry.seq,
+                stamp: at.clone(),
+                fact,
+            })
         };
         let recorded: Vec<Recorded> = facts
             .into_iter()
