@@ -7,8 +7,34 @@
 
 use std::io::IsTerminal;
 
-use super::command::brief::{ColorWhen, ScreenArgs};
+use clap::Args;
+
 use crate::tui::{Ground, Letters, Look};
+
+/// How the screen is painted.
+#[derive(Debug, Clone, Args)]
+pub struct ScreenArgs {
+    /// Nothing but ASCII letters.
+    #[arg(long)]
+    pub ascii: bool,
+    /// White on black instead of black on white.
+    #[arg(long)]
+    pub dusk: bool,
+    /// Whether to use colours.
+    #[arg(long, value_name = "WHEN", value_enum)]
+    pub color: Option<ColorWhen>,
+}
+
+/// When colours are used.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, clap::ValueEnum)]
+pub enum ColorWhen {
+    /// Unless NO_COLOR says no.
+    Auto,
+    /// Always.
+    Always,
+    /// Never.
+    Never,
+}
 
 /// The surroundings.
 #[derive(Debug, Clone)]

@@ -1,6 +1,9 @@
 //! One test binary: the house, the published checks, the kits, the session, the screens.
 
 mod support;
+mod driver;
+mod terminal;
+mod house;
 mod session;
 mod record_desk;
 mod record_attacks;

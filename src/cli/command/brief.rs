@@ -5,7 +5,7 @@ use std::path::{Path, PathBuf};
 use clap::Args;
 
 use super::check::{findings_of, print_findings};
-use crate::cli::environment::{Environment, look};
+use crate::cli::environment::{Environment, ScreenArgs, look};
 use crate::cli::exit::Exit;
 use crate::cli::output::Output;
 use crate::diagnostic::{Severity, count};
@@ -25,31 +25,6 @@ pub struct BriefArgs {
     /// How the screen is painted.
     #[command(flatten)]
     pub screen: ScreenArgs,
-}
-
-/// How the screen is painted.
-#[derive(Debug, Clone, Args)]
-pub struct ScreenArgs {
-    /// Nothing but ASCII letters.
-    #[arg(long)]
-    pub ascii: bool,
-    /// White on black instead of black on white.
-    #[arg(long)]
-    pub dusk: bool,
-    /// Whether to use colours.
-    #[arg(long, value_name = "WHEN", value_enum)]
-    pub color: Option<ColorWhen>,
-}
-
-/// When colours are used.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, clap::ValueEnum)]
-pub enum ColorWhen {
-    /// Unless NO_COLOR says no.
-    Auto,
-    /// Always.
-    Always,
-    /// Never.
-    Never,
 }
 
 /// Runs it.

@@ -4,8 +4,8 @@ use std::path::{Path, PathBuf};
 
 use clap::Args;
 
-use super::brief::{self, BriefArgs, ScreenArgs};
-use crate::cli::environment::Environment;
+use super::brief::{self, BriefArgs};
+use crate::cli::environment::{Environment, ScreenArgs};
 use crate::cli::exit::Exit;
 use crate::cli::output::Output;
 use crate::shell::files::{self, Readers};

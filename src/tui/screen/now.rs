@@ -256,6 +256,10 @@ fn number_line(view: &View<'_>, paper: &mut Paper<'_>, (x, row): (u16, u16), ite
 /// The panel where nothing is asked: the closed day.
 fn resting(view: &View<'_>, paper: &mut Paper<'_>, part: Rect) {
     let session = view.session;
+    if view.desk.recording {
+        paper.bold(part.x, part.y, "RECORDING");
+        return;
+    }
     let mut row = part.y;
     let mut line = |paper: &mut Paper<'_>, words: &str| {
         row += paper.wrapped(Rect::new(part.x, row, part.width, part.height), words) + 1;

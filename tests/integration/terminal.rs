@@ -1,0 +1,298 @@
+//! The built program in a real terminal: the whole demo job, kills, signals, small windows.
+
+use std::path::Path;
+use std::process::Command;
+use std::time::Duration;
+
+use crate::driver::{Terminal, keys_for, position};
+
+fn run(arguments: &[&str]) -> (i32, String, String) {
+    let output = Command::new(env!("CARGO_BIN_EXE_stumpside"))
+        .args(arguments)
+        .output()
+        .unwrap();
+    (
+        output.status.code().unwrap(),
+        String::from_utf8(output.stdout).unwrap(),
+        String::from_utf8(output.stderr).unwrap(),
+    )
+}
+
+fn record_of(job: &Path) -> String {
+    job.join("record.jsonl").to_str().unwrap().to_owned()
+}
+
+#[test]
+fn the_whole_demo_job_is_briefed_and_its_record_verifies() {
+    let folder = tempfile::tempdir().unwrap();
+    let job = folder.path().join("job");
+    let mut terminal = Terminal::start(
+        &["demo", "--job", job.to_str().unwrap()],
+        (80, 24),
+        folder.path(),
+    );
+    terminal.wait("roll call", |s| {
+        s.contains("ROLL CALL") && s.contains("> 1 >")
+    });
+    let mut titles = std::collections::BTreeSet::new();
+    for _ in 0..400 {
+        let screen = terminal.screen();
+        if screen.contains("THE DAY IS CLOSED") {
+            break;
+        }
+        for title in [
+            "ROLL CALL",
+            "TAILGATE",
+            "NEXT TREE",
+            "SHORT TALK",
+            "WALK-UP",
+            "CUTS",
+            "HOLD LINE",
+            "seconds gone",
+            "ALL CLEAR",
+            "CLOSE",
+        ] {
+            if screen.contains(title) {
+                titles.insert(title);
+            }
+        }
+        terminal.answer();
+    }
+    assert!(
+        terminal.screen().contains("THE DAY IS CLOSED"),
+        "{}",
+        terminal.screen()
+    );
+    assert_eq!(titles.len(), 10, "every stage was seen: {titles:?}");
+    terminal.keys("q\r");
+    let (code, sent, _) = terminal.end();
+    assert_eq!(code, 0);
+    assert_restored_once(&sent);
+    let (code, text, _) = run(&["record", "verify", &record_of(&job), "--format", "json"]);
+    assert_eq!(code, 0, "{text}");
+    assert!(text.contains("\"verdict\":\"closed-ok\""), "{text}");
+    assert!(text.contains("\"unsigned_required\":[]"), "{text}");
+}
+
+/// The terminal is taken once and given back once.
+fn assert_restored_once(sent: &[u8]) {
+    let count = |pattern: &[u8]| {
+        sent.windows(pattern.len())
+            .filter(|w| *w == pattern)
+            .count()
+    };
+    assert_eq!((count(b"\x1b[?1049h"), count(b"\x1b[?1049l")), (1, 1));
+}
+
+/// Numbers without a pattern: Marsaglia's xorshift (2003).
+struct Dice(u64);
+
+impl Dice {
+    fn throw(&mut self) -> u64 {
+        self.0 ^= self.0 << 13;
+        self.0 ^= self.0 >> 7;
+        self.0 ^= self.0 << 17;
+        self.0 >> 33
+    }
+}
+
+/// Answers that stand in the record, in order, as their item and stage.
+fn answers_on_disk(job: &Path) -> Vec<String> {
+    let text = std::fs::read_to_string(job.join("record.jsonl")).unwrap_or_default();
+    text.lines()
+        .filter_map(|line| serde_json::from_str::<serde_json::Value>(line).ok())
+        .filter(|v| {
+            v.get("values").is_some()
+                || v["kind"] == "second_look_held"
+                || v["kind"] == "second_look_revealed"
+        })
+        .map(|v| format!("{} {} {}", v["seq"], v["kind"], v["item"]))
+        .collect()
+}
+
+#[test]
+fn a_hundred_kills_lose_nothing_that_was_shown_as_recorded() {
+    let folder = tempfile::tempdir().unwrap();
+    let job = folder.path().join("job");
+    let mut random = Dice(0x9e37_79b9_7f4a_7c15);
+    let mut acknowledged: Vec<String> = vec![];
+    let mut kills = 0;
+    while kills < 100 {
+        let mut terminal = Terminal::start(
+            &["demo", "--job", job.to_str().unwrap()],
+            (80, 24),
+            folder.path(),
+        );
+        terminal.wait("a step or the end", |s| {
+            s.contains("> 1 >")
+                || s.contains(" > ")
+                || s.contains("seconds gone")
+                || s.contains("CLOSED")
+        });
+        let kept = answers_on_disk(&job);
+        assert!(
+            kept.starts_with(&acknowledged),
+            "what was shown as recorded is there after kill {kills}"
+        );
+        for _ in 0..random.throw() % 4 {
+            if terminal.screen().contains("THE DAY IS CLOSED") {
+                break;
+            }
+            terminal.answer();
+        }
+        if terminal.screen().contains("THE DAY IS CLOSED") {
+            terminal.kill();
+            std::fs::remove_dir_all(&job).unwrap();
+            acknowledged.clear();
+            continue;
+        }
+        // What the screen shows as done now is on disk already.
+        acknowledged = answers_on_disk(&job);
+        let keys = keys_for(&terminal.screen());
+        terminal.keys(&keys);
+        let moment = Duration::from_micros(random.throw() % 12_000);
+        terminal.listen(moment);
+        let before = position(&terminal.screen());
+        let shown_again = answers_on_disk(&job);
+        assert!(shown_again.starts_with(&acknowledged), "{before}");
+        terminal.kill();
+        kills += 1;
+    }
+    let (code, text, _) = run(&["record", "verify", &record_of(&job), "--format", "json"]);
+    assert!(code == 6 || code == 0, "{code}: {text}");
+    assert!(text.contains("\"bad\":[]"), "{text}");
+}
+
+#[test]
+fn signals_end_it_with_the_terminal_restored() {
+    use rustix::process::Signal;
+    for signal in [Signal::TERM, Signal::HUP, Signal::INT] {
+        let folder = tempfile::tempdir().unwrap();
+        let job = folder.path().join("job");
+        let mut terminal = Terminal::start(
+            &["demo", "--job", job.to_str().unwrap()],
+            (80, 24),
+            folder.path(),
+        );
+        terminal.wait("roll call", |s| s.contains("> 1 >"));
+        terminal.answer();
+        terminal.signal(signal);
+        let (code, sent, _) = terminal.end();
+        assert_eq!(code, 130, "{signal:?}");
+        assert_restored_once(&sent);
+        assert!(String::from_utf8_lossy(&sent).contains("record code"));
+    }
+}
+
+#[test]
+fn space_stops_from_every_work_screen_and_the_place_is_kept() {
+    let folder = tempfile::tempdir().unwrap();
+    let job = folder.path().join("job");
+    let mut terminal = Terminal::start(
+        &["demo", "--job", job.to_str().unwrap()],
+        (80, 24),
+        folder.path(),
+    );
+    terminal.wait("roll call", |s| s.contains("> 1 >"));
+    let mut stages = std::collections::BTreeSet::new();
+    for _ in 0..90 {
+        let screen = terminal.screen();
+        let title = screen
+            .lines()
+            .next()
+            .unwrap()
+            .get(44..66)
+            .unwrap_or("")
+            .trim()
+            .to_owned();
+        if !screen.contains("seconds gone")
+            && !screen.contains("any key = back")
+            && stages.insert(title)
+        {
+            let before = crate::driver::lit_number(&screen);
+            terminal.keys(" ");
+            terminal.wait("stopped", |s| s.contains("STOPPED") && s.contains("> 1 >"));
+            while terminal.screen().contains("STOPPED") {
+                terminal.answer();
+            }
+            let after = terminal.screen();
+            // At the hold line the items are asked again; elsewhere the place is the same.
+            assert!(
+                crate::driver::lit_number(&after) == before || after.contains("HOLD LINE"),
+                "{after}"
+            );
+        }
+        if terminal.screen().contains("ALL CLEAR") {
+            break;
+        }
+        terminal.answer();
+    }
+    assert!(stages.len() >= 8, "{stages:?}");
+}
+
+#[test]
+fn small_windows_say_what_they_need_and_recover() {
+    let folder = tempfile::tempdir().unwrap();
+    let job = folder.path().join("job");
+    let mut terminal = Terminal::start(
+        &["demo", "--job", job.to_str().unwrap()],
+        (80, 24),
+        folder.path(),
+    );
+    terminal.wait("roll call", |s| s.contains("> 1 >"));
+    terminal.resize((30, 8));
+    terminal.wait("what it needs", |s| s.contains("needs 40x12, has 30x8"));
+    terminal.resize((40, 12));
+    terminal.wait("the card", |s| s.contains("ROLL CALL, step 1"));
+    terminal.resize((120, 40));
+    terminal.wait("the wide screen", |s| s.contains("IF SOMEBODY IS HURT"));
+    terminal.keys("q\r");
+    assert_eq!(terminal.end().0, 0);
+}
+
+#[test]
+fn the_ascii_look_sends_no_byte_above_0x7f_and_no_color_no_colour() {
+    let folder = tempfile::tempdir().unwrap();
+    let job = folder.path().join("job");
+    let arguments = ["demo", "--ascii", "--job", job.to_str().unwrap()];
+    let mut terminal =
+        Terminal::start_with(&arguments, (80, 24), (folder.path(), &[("NO_COLOR", "1")]));
+    terminal.wait("roll call", |s| s.contains("> 1 >"));
+    for _ in 0..30 {
+        terminal.answer();
+    }
+    terminal.keys("q\r");
+    let (code, sent, _) = terminal.end();
+    assert_eq!(code, 0);
+    assert_eq!(sent.iter().find(|b| **b > 0x7f), None);
+    let text = String::from_utf8(sent).unwrap();
+    let colours: Vec<&str> = text
+        .split("\x1b[")
+        .filter_map(|rest| rest.split_once('m'))
+        .map(|(codes, _)| codes)
+        .filter(|c| {
+            c.split(';')
+                .any(|n| matches!(n.parse::<u32>(), Ok(30..=38 | 40..=48 | 90..=107)))
+        })
+        .collect();
+    assert_eq!(colours, Vec::<&str>::new());
+}
+
+#[test]
+fn an_idle_screen_sends_little() {
+    let folder = tempfile::tempdir().unwrap();
+    let job = folder.path().join("job");
+    let mut terminal = Terminal::start(
+        &["demo", "--job", job.to_str().unwrap()],
+        (80, 24),
+        folder.path(),
+    );
+    terminal.wait("roll call", |s| s.contains("> 1 >"));
+    terminal.listen(Duration::from_millis(500));
+    let before = terminal.sent.len();
+    terminal.listen(Duration::from_secs(3));
+    let a_second = (terminal.sent.len() - before) / 3;
+    assert!(a_second <= 200, "{a_second} bytes a second");
+    terminal.keys("q\r");
+    assert_eq!(terminal.end().0, 0);
+}
