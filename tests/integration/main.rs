@@ -1,1 +1,3 @@
 //! One test binary: the house, the published checks, the kits, the session, the screens.
+
+mod published;
