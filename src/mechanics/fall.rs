@@ -1,7 +1,7 @@
 //! The fall itself: a tree turning about its hinge, with no hinge and no air for the shortest
 //! time, with the crown's drag for the long end. It never counts on the hinge to slow it.
 
-use crate::mechanics::numeric::integrate;
+use crate::mechanics::integrate;
 use crate::mechanics::wind::AIR_DENSITY;
 use crate::units::{Angle, Duration, Force, GRAVITY, Inertia, Length, Mass, Speed};
 

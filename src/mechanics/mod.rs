@@ -20,4 +20,4 @@ pub mod wedge;
 pub mod rigging;
 pub mod zone;
 
-pub(crate) use numeric::{bisect, root};
+pub(crate) use numeric::{bisect, integrate, root};

@@ -3,7 +3,7 @@
 
 use crate::mechanics::holding::{Demand, Load, Wood};
 use crate::mechanics::root;
-use crate::mechanics::section::{Stem, Sums};
+use crate::mechanics::section::{Shape, Stem, Sums};
 use crate::units::{Force, FractureEnergy, Length, Moment, Stress};
 
 /// The share of the modulus of rupture a strap may carry when its thickness is chosen.
@@ -62,7 +62,7 @@ pub struct Held {
 /// # Source
 /// Beam energy, derived; the worked example in the tests.
 pub fn held(slot: &Slotted<'_>, wood: &Wood, demand: &Demand) -> Option<Held> {
-    let parts = Parts::of(slot);
+    let parts = Parts::new(slot.stem.shape(), slot.edges());
     if parts.hinge.area <= 0.0 || parts.strap.area <= 0.0 {
         return None;
     }
@@ -91,7 +91,9 @@ pub fn held(slot: &Slotted<'_>, wood: &Wood, demand: &Demand) -> Option<Held> {
 /// # Source
 /// Derived; the worked example in the tests.
 pub fn failing_thickness(slot: &Slotted<'_>, limit: Stress, demand: &Demand) -> Length {
-    Length::si(failing(slot, limit.value(), Load::of(demand)))
+    let (face, hinge, _) = slot.edges();
+    let cut = (slot.stem.shape(), face, hinge);
+    Length::si(failing(cut, limit.value(), Load::of(demand)))
 }
 
 /// The least strap to leave.
@@ -104,33 +106,43 @@ pub fn failing_thickness(slot: &Slotted<'_>, limit: Stress, demand: &Demand) -> 
 /// # Source
 /// Saw manuals' tenth to fifth of the diameter (opened), with the computed figure beside it.
 pub fn thickness_min(slot: &Slotted<'_>, wood: &Wood, demand: &Demand) -> Length {
-    Length::si(thickness_min_of(slot, wood.mor.value(), Load::of(demand)))
+    let (face, hinge, _) = slot.edges();
+    let cut = (slot.stem.shape(), face, hinge);
+    Length::si(thickness_min_of(cut, wood.mor.value(), Load::of(demand)))
 }
 
-pub(crate) fn thickness_min_of(slot: &Slotted<'_>, mor: f64, load: Load) -> f64 {
-    let least = LEAST_SHARE_OF_DIAMETER * slot.stem.along().value();
-    let trial = Slotted {
-        strap: Length::si(least / THICKNESS_FACTOR),
-        ..*slot
-    };
-    let parts = Parts::of(&trial);
+impl Slotted<'_> {
+    fn edges(&self) -> (f64, f64, f64) {
+        (
+            self.face_depth.value(),
+            self.hinge.value(),
+            self.strap.value(),
+        )
+    }
+}
+
+/// A shape with the depth of its face and the thickness of its hinge.
+pub(crate) type CutShape<'a> = (Shape<'a>, f64, f64);
+
+pub(crate) fn thickness_min_of(cut: CutShape<'_>, mor: f64, load: Load) -> f64 {
+    let (shape, face, hinge) = cut;
+    let least = LEAST_SHARE_OF_DIAMETER * 2.0 * shape.ellipse.a;
+    let parts = Parts::new(shape, (face, hinge, least / THICKNESS_FACTOR));
     if parts.tension(load) <= WORKING_SHARE * mor * parts.strap.area {
         return least;
     }
-    THICKNESS_FACTOR * failing(slot, WORKING_SHARE * mor, load)
+    THICKNESS_FACTOR * failing(cut, WORKING_SHARE * mor, load)
 }
 
-fn failing(slot: &Slotted<'_>, limit: f64, load: Load) -> f64 {
+fn failing(cut: CutShape<'_>, limit: f64, load: Load) -> f64 {
+    let (shape, face, hinge) = cut;
     let spare = |thickness: f64| {
-        let parts = Parts::of(&Slotted {
-            strap: Length::si(thickness),
-            ..*slot
-        });
+        let parts = Parts::new(shape, (face, hinge, thickness));
         limit * parts.strap.area - parts.tension(load)
     };
-    let stem = slot.stem.along().value();
-    let most = stem - slot.face_depth.value() - slot.hinge.value();
-    let least = 1.0e-6 * stem;
+    let diameter = 2.0 * shape.ellipse.a;
+    let most = diameter - face - hinge;
+    let least = 1.0e-6 * diameter;
     if most <= least || spare(least) >= 0.0 {
         return 0.0;
     }
@@ -170,12 +182,13 @@ impl Together {
 }
 
 impl Parts {
-    pub(crate) fn of(slot: &Slotted<'_>) -> Self {
-        let shape = slot.stem.shape();
+    /// The sections left by a face, a hinge and a strap of these depths and thicknesses.
+    pub(crate) fn new(shape: Shape<'_>, edges: (f64, f64, f64)) -> Self {
+        let (face, hinge, strap) = edges;
         let a = shape.ellipse.a;
-        let apex = a - slot.face_depth.value();
-        let hinge_edge = apex - slot.hinge.value();
-        let strap_edge = -a + slot.strap.value();
+        let apex = a - face;
+        let hinge_edge = apex - hinge;
+        let strap_edge = -a + strap;
         let full = shape.beyond(-a);
         let front = shape.beyond(hinge_edge);
         let rest = shape.beyond(strap_edge);
