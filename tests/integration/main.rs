@@ -13,3 +13,4 @@ mod record_durability;
 mod record_folder;
 mod record_interop;
 mod commands_record;
+mod published;
