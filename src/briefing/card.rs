@@ -149,13 +149,13 @@ impl Card {
     }
 }
 
-/// The rung of a step. `stump` gives the geometry its edges are measured from; `commits` says
-/// whether the method's committing cut is this one.
-pub fn rung_of(step: &Step, stump: &StumpCard, words: &CutWords) -> Rung {
-    let word = word_of(step, words);
+/// The rung of a step. `stump` gives the geometry its edges are measured from; `plunged` says
+/// whether the sequence opens a slot, so that a back cut is worked from it to the strap.
+pub fn rung_of(step: &Step, (stump, plunged): (&StumpCard, bool), words: &CutWords) -> Rung {
+    let word = word_of(step, plunged, words);
     let seconds = step.seconds.map(|s| whole(s.value() * 1_000.0));
     let (planned_um, removed) = match &step.act {
-        StepAct::Cut(cut) => cut_values(cut, stump),
+        StepAct::Cut(cut) => cut_values(cut, (stump, plunged)),
         StepAct::Check { what } => (check_value(what, stump), None),
         StepAct::Hold { .. } | StepAct::Do(_) => (None, None),
     };
@@ -171,11 +171,16 @@ pub fn rung_of(step: &Step, stump: &StumpCard, words: &CutWords) -> Rung {
     }
 }
 
-fn word_of(step: &Step, words: &CutWords) -> String {
+fn word_of(step: &Step, plunged: bool, words: &CutWords) -> String {
     let word = match &step.act {
         StepAct::Cut(Cut::BackCut {
             to: Edge::FromRear(_),
-        }) => "back-cut-to-strap".to_owned(),
+        }) => if plunged {
+            "back-cut-to-strap"
+        } else {
+            "back-cut-begun"
+        }
+        .to_owned(),
         StepAct::Cut(cut) => cut.word().to_owned(),
         StepAct::Check { what } => format!("{what}-check"),
         StepAct::Hold { .. } => "hold".to_owned(),
@@ -205,7 +210,7 @@ fn check_value(what: &str, stump: &StumpCard) -> Option<i64> {
 }
 
 /// The planned value of a cut and the wood it takes away.
-fn cut_values(cut: &Cut, stump: &StumpCard) -> (Option<i64>, Option<Removed>) {
+fn cut_values(cut: &Cut, (stump, plunged): (&StumpCard, bool)) -> (Option<i64>, Option<Removed>) {
     let half = stump.along_um / 2;
     let apex = half - stump.face_um;
     let at = |edge: &Edge| match edge {
@@ -225,6 +230,9 @@ fn cut_values(cut: &Cut, stump: &StumpCard) -> (Option<i64>, Option<Removed>) {
                 strip(edge - micro(Length::cm(3.0)), edge),
             )
         }
+        Cut::BackCut {
+            to: to @ Edge::FromRear(depth),
+        } if !plunged => (Some(micro(*depth)), strip(-half, at(to))),
         Cut::BackCut {
             to: Edge::FromRear(strap),
         } => (Some(micro(*strap)), strip(micro(*strap) - half, hinge_edge)),
@@ -249,9 +257,12 @@ pub(super) fn tolerance_of(what: What, tolerance: &super::Tolerance) -> i64 {
     match what {
         What::Hinge => tolerance.hinge_um,
         What::Stump => tolerance.diameter_um,
-        What::FaceDepth | What::Strap | What::BackCutHeight | What::Bypass | What::BehindHinge => {
-            tolerance.depth_um
-        }
+        What::FaceDepth
+        | What::Strap
+        | What::BackCutHeight
+        | What::Bypass
+        | What::BehindHinge
+        | What::BackCutDepth => tolerance.depth_um,
         What::Lean => tolerance.lean_mdeg,
         What::Wind | What::Count => 0,
     }

@@ -1,6 +1,7 @@
 //! The job as the day needs it: people, trees, tolerances, sentences. Made from the plan and the
 //! parts; it keeps integers in the record's units.
 
+use crate::mechanics::lean::{TwoViews, from_two_views};
 use crate::parts::Parts;
 use crate::plan::{DisplayUnits, Lean, Measured, Plan, Role, Tree};
 use crate::units::{Angle, FromSi, Length};
@@ -197,32 +198,25 @@ fn tree(tree: &Tree) -> JobTree {
 
 /// Angle, spread and bearing in degrees of a lean, however it was measured.
 fn total_lean(lean: &Lean) -> (Angle, Angle, f64) {
-    match lean {
-        Lean::Toward { angle, toward } => (
-            angle.reading.value,
-            angle.reading.spread,
-            toward.value.in_deg(),
-        ),
+    let lean = match lean {
+        Lean::Toward { angle, toward } => {
+            return (
+                angle.reading.value,
+                angle.reading.spread,
+                toward.value.in_deg(),
+            );
+        }
         Lean::Views {
             view_a,
             view_b,
             facing,
-        } => {
-            let (a, b) = (
-                libm::tan(view_a.value().value()),
-                libm::tan(view_b.value().value()),
-            );
-            let angle = Angle::si(libm::atan(libm::hypot(a, b)));
-            // View A shows lean to the right of `facing`; view B, a right angle on, to its right.
-            let turn = Angle::si(libm::atan2(b, a)).in_deg();
-            let toward = facing.value.turned(Angle::deg(90.0 + turn)).in_deg();
-            (
-                angle,
-                view_a.reading.spread.max(view_b.reading.spread),
-                toward,
-            )
-        }
-    }
+        } => from_two_views(&TwoViews {
+            view_a: view_a.reading,
+            view_b: view_b.reading,
+            facing: facing.value,
+        }),
+    };
+    (lean.angle.value, lean.angle.spread, lean.toward.in_deg())
 }
 
 fn emergency(plan: &Plan) -> Vec<String> {

@@ -416,7 +416,8 @@ fn planned_at(job: &Job, tree: &JobTree, what: What) -> Option<AskedValue> {
         | What::Strap
         | What::BackCutHeight
         | What::Bypass
-        | What::BehindHinge => None,
+        | What::BehindHinge
+        | What::BackCutDepth => None,
     }
 }
 
@@ -438,7 +439,9 @@ const fn range(what: What) -> (i64, i64) {
         What::Count => (0, 99),
         What::Lean => (0, 60_000),
         What::Stump => (30_000, 5_000_000),
-        What::Hinge | What::FaceDepth | What::Strap | What::BehindHinge => (1_000, 3_000_000),
+        What::Hinge | What::FaceDepth | What::Strap | What::BehindHinge | What::BackCutDepth => {
+            (1_000, 3_000_000)
+        }
         What::BackCutHeight | What::Bypass => (0, 600_000),
     }
 }

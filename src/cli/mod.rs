@@ -25,6 +25,10 @@ struct Line {
 enum Command {
     /// Finds everything wrong with a plan, in one run.
     Check(command::check::CheckArgs),
+    /// Every figure of every tree, the method proposed and why.
+    Sizeup(command::sizeup::SizeupArgs),
+    /// A tree's steps on the virtual stump, judged centimetre by centimetre.
+    Simulate(command::simulate::SimulateArgs),
     /// Opens the terminal program on a job; goes on where its record ends.
     Brief(command::brief::BriefArgs),
     /// Copies a demo job into a folder of its own and opens it.
@@ -47,6 +51,8 @@ pub fn run() -> ExitCode {
 fn dispatch(line: &Line, output: &mut Output<'_>) -> Exit {
     match &line.command {
         Command::Check(args) => command::check::run(args, output),
+        Command::Sizeup(args) => command::sizeup::run(args, output),
+        Command::Simulate(args) => command::simulate::run(args, output),
         Command::Brief(args) => {
             command::brief::run(args, &environment::Environment::look_around(), output)
         }

@@ -118,6 +118,8 @@ pub enum What {
     Bypass,
     /// How far a slot or cut lies behind the face's apex.
     BehindHinge,
+    /// Depth of a back cut from the rear.
+    BackCutDepth,
 }
 
 /// A caution: kind of hazard, what happens, how to avoid it.

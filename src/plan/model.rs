@@ -429,11 +429,11 @@ pub enum Lean {
     },
     /// Two views at right angles.
     Views {
-        /// Lean to the viewer's right, seen facing `facing`.
+        /// Lean in the plane of `facing`, towards it positive.
         view_a: Measured<Angle>,
-        /// Lean to the viewer's right, seen facing `facing` turned clockwise by a right angle.
+        /// Lean in the plane a right angle clockwise of `facing`, towards it positive.
         view_b: Measured<Angle>,
-        /// The bearing the viewer of view A faces.
+        /// The bearing along which view A counts positive.
         facing: Spanned<Bearing>,
     },
 }

@@ -249,6 +249,7 @@ const WHATS: &[(What, &str, &str)] = &[
     (What::BackCutHeight, "back-cut-height", "um"),
     (What::Bypass, "bypass", "um"),
     (What::BehindHinge, "behind-hinge", "um"),
+    (What::BackCutDepth, "back-cut-depth", "um"),
 ];
 
 fn what_words(what: What) -> (&'static str, &'static str) {

@@ -79,7 +79,7 @@ pub(crate) fn card(method: &str) -> Card {
     let commits = parts.cuts.methods[method].commits.clone();
     let mut rungs: Vec<_> = steps
         .iter()
-        .map(|s| rung_of(s, &stump, &parts.cuts))
+        .map(|s| rung_of(s, (&stump, method == "plunge-with-strap"), &parts.cuts))
         .collect();
     for rung in &mut rungs {
         rung.commits = rung.word == commits;

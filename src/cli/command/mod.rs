@@ -6,3 +6,6 @@ pub mod crew;
 pub mod brief;
 pub mod check;
 pub mod demo;
+pub mod simulate;
+pub mod sizeup;
+mod sizeup_text;
