@@ -518,7 +518,7 @@ fn timing_note(rung: &Rung) -> String {
     let note = if rung.note.is_empty() {
         String::new()
     } else {
-        format!(". {}", rung.note)
+        format!(". {}", crate::parts::capital(&rung.note))
     };
     let pace = match rung.timing.as_str() {
         "brisk" => "BRISK: to the hinge without a stop",

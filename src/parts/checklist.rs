@@ -148,7 +148,8 @@ impl Caution {
     }
 }
 
-fn capital(text: &str) -> String {
+/// A text with its first letter large.
+pub fn capital(text: &str) -> String {
     let mut chars = text.chars();
     chars
         .next()

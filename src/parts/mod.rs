@@ -10,7 +10,7 @@ use std::collections::BTreeMap;
 use sha2::{Digest, Sha256};
 use thiserror::Error;
 
-pub use checklist::{Caution, Checklist, Choice, ListItem, Measure, What};
+pub use checklist::{Caution, Checklist, Choice, ListItem, Measure, What, capital};
 pub use method::{CutWords, MethodWords, StepWords};
 pub use tailgate::{Everyone, Question, Tailgate};
 

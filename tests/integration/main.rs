@@ -5,6 +5,7 @@ mod driver;
 mod terminal;
 mod house;
 mod session;
+mod screens;
 mod record_desk;
 mod record_attacks;
 mod record_kit;

@@ -111,8 +111,24 @@ pub(crate) struct Bench {
 }
 
 impl Bench {
-    /// The demo job before its first act, every tree sized up.
+    /// The demo job before its first act, every tree sized up by the mechanics.
+    pub(crate) fn real() -> Self {
+        let plan = demo_plan();
+        let parts = Parts::built_in();
+        Self::with_cards(|tree| stumpside::briefing::size_up(&plan, tree, (&[], &parts)))
+    }
+
+    /// The demo job before its first act, every tree with a card made for tests.
     pub(crate) fn new() -> Self {
+        Self::with_cards(|tree| {
+            card(match tree {
+                "T3" => "plunge-with-strap",
+                _ => "straight-back-cut",
+            })
+        })
+    }
+
+    fn with_cards(card: impl Fn(&str) -> Card) -> Self {
         let session = Session::new(demo_job());
         let mut bench = Self {
             session,
@@ -121,14 +137,10 @@ impl Bench {
             seq: 1,
             now_ms: 1_000,
         };
-        for (tree, method) in [
-            ("T1", "straight-back-cut"),
-            ("T2", "straight-back-cut"),
-            ("T3", "plunge-with-strap"),
-        ] {
+        for tree in ["T1", "T2", "T3"] {
             let fact = Fact::SizedUp {
                 tree: tree.to_owned(),
-                card: Box::new(card(method)),
+                card: Box::new(card(tree)),
                 because: "as planned".to_owned(),
                 changes: vec![],
             };

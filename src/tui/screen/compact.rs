@@ -6,7 +6,7 @@ use super::View;
 use super::header::{cut, footer_words, tree_line};
 use super::paper::Paper;
 use crate::briefing::Form;
-use crate::tui::answer;
+use crate::tui::{answer, words};
 
 /// Draws it.
 pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>) {
@@ -43,6 +43,18 @@ pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>) {
             .map(|(n, o)| format!("{n} {}", o.say))
             .collect();
         paper.wrapped(Rect::new(0, row, width, room), &all.join("  "));
+    } else if let Form::Measure(fields) = &item.form {
+        let one = |f: &crate::briefing::Field| match f.planned.filter(|_| item.blind_with.is_none())
+        {
+            Some(plan) => format!(
+                "{}: plan {}",
+                f.label,
+                words::measured(f.what, plan.value, session.job.units)
+            ),
+            None => f.label.clone(),
+        };
+        let all: Vec<String> = fields.iter().map(one).collect();
+        paper.wrapped(Rect::new(0, row, width, room), &all.join(", "));
     } else if let Some(sentence) = &item.sentence {
         paper.wrapped(Rect::new(0, row, width, room), sentence);
     }

@@ -43,28 +43,39 @@ pub(super) fn lines(card: &Card) -> Vec<String> {
         "o ".repeat(of.saturating_sub(past))
     );
     let counted = match past {
-        0 => format!("none of these {of} past the limit"),
-        n => format!("{n} of {of} past the limit"),
+        0 => format!("none of these {of} past it"),
+        n => format!("{n} of {of} past it"),
     };
-    let worst = card
-        .worst_ppm
-        .map_or("worst credible: CANNOT SAY".to_owned(), |ppm| {
-            let tenths = words::rounded(ppm, 100_000);
-            format!(
-                "worst credible: {}.{} times the limit",
-                tenths / 10,
-                (tenths % 10).abs()
-            )
+    let worst = card.worst_ppm.map_or("CANNOT SAY".to_owned(), times);
+    let range = card
+        .figure("split_ratio_at_commit")
+        .map_or(String::new(), |figure| {
+            let [low, best, high] = figure.band.map(times);
+            format!("Times the limit: middle {best}, {low} to {high}.")
         });
     vec![
-        format!("MARGIN  {marks}"),
+        format!("MARGIN  {}", marks.trim_end()),
         format!("State: {state}, {counted}"),
-        worst,
-        format!("Most doubt: {}", card.doubt),
-        "Left out: gusts, ground, knots, hidden rot or shake.".to_owned(),
-        "This is arithmetic on what you measured. The person in charge at the tree decides."
-            .to_owned(),
+        range,
+        format!("Worst credible: {worst} times the limit"),
+        format!("Most doubt: {}", card.doubt.split(';').next().unwrap_or("")),
+        format!(
+            "To shrink it:{}",
+            card.doubt.split(';').nth(1).unwrap_or(" -")
+        ),
+        "Left out: gusts, ground, knots, hidden rot".to_owned(),
+        "The person in charge at the tree decides.".to_owned(),
     ]
+}
+
+/// A ratio in parts in a million as a number with two figures at most.
+fn times(ppm: i64) -> String {
+    let tenths = words::rounded(ppm, 100_000);
+    if tenths.abs() >= 100 {
+        format!("{}", words::rounded(tenths, 10))
+    } else {
+        format!("{}.{}", tenths / 10, (tenths % 10).abs())
+    }
 }
 
 /// A state word of the machine output in the words of the screen.

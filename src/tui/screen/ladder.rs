@@ -8,10 +8,19 @@ use super::paper::Paper;
 use super::{View, shows_stump};
 use crate::briefing::{Card, Item};
 use crate::session::{Session, Stage};
-use crate::tui::raster;
+use crate::tui::{raster, words};
+
+/// What stands below the ladder.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) enum Below {
+    /// The stump, where the stage has one.
+    Stump,
+    /// Words only: the stump stands elsewhere.
+    Words,
+}
 
 /// Draws the ladder.
-pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>, part: Rect) {
+pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>, (part, below): (Rect, Below)) {
     let session = view.session;
     let lit = session.lit();
     let mut row = part.y;
@@ -33,7 +42,7 @@ pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>, part: Rect) {
         }
         row += 1;
     }
-    if shows_stump(session) {
+    if shows_stump(session) && below == Below::Stump {
         stump(
             view,
             paper,
@@ -137,21 +146,29 @@ fn stump_lines(session: &Session, card: &Card, (width, height): (u16, u16)) -> V
     raster::lines(&scene, usize::from(width), usize::from(height))
 }
 
-/// What stands below the ladder where there is no stump: the place kept, or the story.
+/// What stands below the ladder where there is no stump: the story of the job, or what matters now.
 fn side_lines(session: &Session, paper: &mut Paper<'_>, part: Rect) {
+    let job = &session.job;
     let mut words: Vec<String> = vec![];
     match session.stage {
+        Stage::RollCall | Stage::Signing | Stage::Choose => words = story(session),
         Stage::OwnHazards => {
-            words.push("Own hazards first. The list of kinds comes after.".to_owned())
+            words.push("Own hazards first. The list of kinds comes after.".to_owned());
+            words.extend(story(session));
         }
         Stage::Questions => {
             words.push("Kinds of energy:".to_owned());
-            words.push(session.job.parts.tailgate.kinds_of_energy.join(", "));
+            words.push(job.parts.tailgate.kinds_of_energy.join(", "));
+            let named: Vec<String> = session
+                .hazards
+                .iter()
+                .map(|(_, what)| what.clone())
+                .collect();
+            words.push(format!("Named: {}", named.join("; ")));
         }
         Stage::Stopped => {
             words.push("The place is kept. Saw off. Nobody goes under the lean.".to_owned())
         }
-        Stage::RollCall | Stage::Signing | Stage::Choose => words.push(session.job.intent.clone()),
         Stage::ShortTalk
         | Stage::WalkUp
         | Stage::Cuts
@@ -171,4 +188,27 @@ fn side_lines(session: &Session, paper: &mut Paper<'_>, part: Rect) {
             &line,
         );
     }
+}
+
+/// The job in a few lines: the intent, then each tree with its method, lay and hazards.
+fn story(session: &Session) -> Vec<String> {
+    let job = &session.job;
+    let mut story = vec![job.intent.clone()];
+    for tree in &job.trees {
+        let method = session
+            .cards
+            .get(&tree.id)
+            .and_then(|c| c.method.as_deref())
+            .unwrap_or("no method: ask");
+        let lay = tree.lay_mdeg.map_or(String::new(), |l| {
+            format!(", lay {:03}", words::rounded(l, 1_000))
+        });
+        story.push(format!("{}: {method}{lay}", tree.id));
+        story.extend(
+            tree.hazards
+                .iter()
+                .map(|(what, control, _)| format!(" {what}: {control}")),
+        );
+    }
+    story
 }

@@ -70,9 +70,18 @@ fn work(view: &View<'_>, paper: &mut Paper<'_>) {
     let (width, height) = paper.size();
     let body = Rect::new(0, 2, width, height - 4);
     const LEFT: u16 = 29;
-    let right_edge = if width >= 118 { width - 38 } else { width };
+    let right_edge = if width >= 118 { width - 42 } else { width };
     paper.column_line(LEFT, body);
-    ladder::draw(view, paper, Rect::new(0, body.y, LEFT - 1, body.height));
+    let picture = if right_edge == width {
+        ladder::Below::Stump
+    } else {
+        ladder::Below::Words
+    };
+    ladder::draw(
+        view,
+        paper,
+        (Rect::new(0, body.y, LEFT - 1, body.height), picture),
+    );
     now::draw(
         view,
         paper,

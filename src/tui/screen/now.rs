@@ -7,6 +7,7 @@ use super::gauge;
 use super::header::cut;
 use super::paper::Paper;
 use crate::briefing::{Field, Form, Item, Kind};
+use crate::parts::What;
 use crate::session::{Done, Session, Stage, Value};
 use crate::tui::answer::{self, Slot};
 use crate::tui::desk::Picture;
@@ -25,6 +26,10 @@ pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>, part: Rect) {
         resting(view, paper, part);
         return;
     };
+    if item.kind == Kind::Go {
+        go(view, paper, (part, &item));
+        return;
+    }
     let total = session.items().len();
     let clock = words::clock(view.now.utc_ms, view.offset_min);
     paper.text(
@@ -42,11 +47,7 @@ pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>, part: Rect) {
     if let Some(timing) = &item.timing {
         row += paper.wrapped_bold(inner(row), &format!("Pace: {timing}"));
     }
-    if let Some(sentence) = item
-        .sentence
-        .as_ref()
-        .filter(|_| item.form == Form::Sign || item.kind == Kind::Go)
-    {
+    if let Some(sentence) = item.sentence.as_ref().filter(|_| item.form == Form::Sign) {
         row += paper.wrapped_bold(inner(row), &format!("\"{sentence}\""));
         if item.form == Form::Sign {
             row += paper.wrapped(
@@ -59,11 +60,78 @@ pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>, part: Rect) {
     if let Some((word, line)) = &item.caution {
         row += paper.wrapped_bold(inner(row), &format!("{word}  {line}"));
     }
-    if matches!(item.kind, Kind::Go) {
-        row += gauge::draw(view, paper, inner(row));
-    }
     let _ = row;
     foot(view, paper, part);
+}
+
+/// A go at the hold line: the measured facts, then the gauge whole, nothing between.
+fn go(view: &View<'_>, paper: &mut Paper<'_>, (part, item): (Rect, &Item)) {
+    let session = view.session;
+    let name = session.job.name_of(&item.asked_of);
+    paper.bold(
+        part.x,
+        part.y,
+        &format!("{}: {name}", item.name.to_uppercase()),
+    );
+    if let Form::Choose(options) = &item.form {
+        let choices: Vec<String> = (1..)
+            .zip(options)
+            .map(|(digit, option)| format!("{digit}  {}", option.say))
+            .collect();
+        paper.text(part.x + 1, part.y + 1, &choices.join("     "));
+    }
+    let slots = answer::slots(item, session.job.units);
+    for (index, slot) in slots.iter().enumerate() {
+        field_line(view, paper, (part.x, part.y + 2), (index, slot, item));
+    }
+    number_line(view, paper, (part.x, part.y + 3), item);
+    let row = part.y + 5;
+    let facts = measured_facts(session);
+    let used = paper.wrapped_bold(Rect::new(part.x, row, part.width, 2), &facts);
+    let from = row + used;
+    let bottom = part.y + part.height;
+    gauge::draw(
+        view,
+        paper,
+        Rect::new(part.x, from, part.width, bottom.saturating_sub(from + 4)),
+    );
+    foot(view, paper, part);
+}
+
+/// What was measured at this tree, the last value of each thing.
+fn measured_facts(session: &Session) -> String {
+    let mut facts: Vec<(String, String)> = vec![];
+    let here = session
+        .done
+        .iter()
+        .filter(|d| d.stands && d.tree == session.tree);
+    for value in here.flat_map(|d| &d.values) {
+        let Value::Measured {
+            label, what, value, ..
+        } = value
+        else {
+            continue;
+        };
+        if matches!(what, What::Count | What::Bypass | What::BehindHinge) {
+            continue;
+        }
+        let words = words::measured(*what, *value, session.job.units);
+        let name = match what {
+            What::Hinge => "hinge",
+            What::Strap => "strap",
+            What::FaceDepth => "face",
+            _ => label.as_str(),
+        };
+        match facts.iter_mut().find(|(known, _)| known == name) {
+            Some((_, old)) => *old = words,
+            None => facts.push((name.to_owned(), words)),
+        }
+    }
+    let all: Vec<String> = facts
+        .into_iter()
+        .map(|(name, words)| format!("{name} {words}"))
+        .collect();
+    format!("MEASURED  {}", all.join(", "))
 }
 
 /// Message and the last two done steps, always in the same rows.

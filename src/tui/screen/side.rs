@@ -59,7 +59,7 @@ pub(super) fn figures(view: &View<'_>, paper: &mut Paper<'_>, part: Rect) {
         .unwrap_or("not with a chainsaw alone");
     paper.bold(part.x, part.y, method);
     let mut row = part.y + 1;
-    paper.text(part.x, row, "low, best, high of what was measured");
+    paper.text(part.x, row, "best (low to high)");
     row += 1;
     for figure in &card.figures {
         if row + 2 >= part.y + part.height {
@@ -73,10 +73,32 @@ pub(super) fn figures(view: &View<'_>, paper: &mut Paper<'_>, part: Rect) {
     }
 }
 
+/// A figure's name as the crew says it.
+fn spoken(name: &str) -> &str {
+    match name {
+        "effective_lean" => "lean by weight",
+        "inline_lean" => "  along the lay",
+        "side_lean" => "  to the right",
+        "moment_inline" => "moment along",
+        "commit_ligament" => "goes at",
+        "split_ratio_at_commit" => "split over asked",
+        "seconds_to_commit" => "cut to going",
+        "seconds_at_rate" => "going to hinge",
+        "strap_thickness_min" => "strap at least",
+        "fall_seconds_min" => "falls in",
+        "escape_seconds" => "out by way",
+        other => other,
+    }
+}
+
 fn figure_line(figure: &Figure, units: DisplayUnits) -> String {
     let [low, best, high] = figure.band.map(|value| in_words(value, figure.unit, units));
-    let name = figure.name.replace('_', " ");
-    format!("{name}: {low}, {best}, {high}")
+    let name = spoken(&figure.name);
+    let number = |words: &str| words.split(' ').next().unwrap_or("").to_owned();
+    if low == high {
+        return format!("{name:<16} {best}");
+    }
+    format!("{name:<16} {best} ({} to {})", number(&low), number(&high))
 }
 
 fn in_words(value: i64, unit: UnitWord, units: DisplayUnits) -> String {

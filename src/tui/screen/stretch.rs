@@ -3,7 +3,9 @@
 use super::View;
 use super::header::cut;
 use super::paper::Paper;
-use crate::session::Stretch;
+use crate::briefing::Rung;
+use crate::session::{Session, Stretch};
+use crate::tui::words;
 
 /// Draws it.
 pub(super) fn draw(view: &View<'_>, stretch: &Stretch, paper: &mut Paper<'_>) {
@@ -25,15 +27,15 @@ pub(super) fn draw(view: &View<'_>, stretch: &Stretch, paper: &mut Paper<'_>) {
         Some((_, "brisk")) => "FINISH THE CUT",
         Some(_) | None => "BACK CUT TO THE HINGE",
     };
-    centred(paper, 2, title);
-    for (row, line) in (4..).zip(digits(seconds)) {
+    let top = if height < 18 { 1 } else { 2 };
+    centred(paper, top, title);
+    for (row, line) in (top + 1 + u16::from(height >= 18)..).zip(digits(seconds)) {
         centred(paper, row, &line);
     }
-    let planned = rung.and_then(|r| r.planned_ms).map_or(String::new(), |ms| {
-        format!(" Plan was about {} s.", (ms + 500) / 1_000)
-    });
-    centred(paper, 10, &format!("seconds gone.{planned}"));
+    let below = top + if height >= 18 { 8 } else { 6 };
+    centred(paper, below, "seconds gone");
     if height >= 18 {
+        centred(paper, below + 1, &planned(session, rung.as_ref()));
         centred(paper, 12, "NO CALLS TO THE SAWYER. EYES ON THE TOP.");
         centred(
             paper,
@@ -52,6 +54,32 @@ pub(super) fn draw(view: &View<'_>, stretch: &Stretch, paper: &mut Paper<'_>) {
         height - 1,
         "SPACE = STOP called   d = it is down   o = on the stump yet, sat back",
     );
+}
+
+/// The plan in words: a number to look at before, never a bar or a countdown.
+fn planned(session: &Session, rung: Option<&Rung>) -> String {
+    let seconds = |ms: i64| words::rounded(ms, 1_000);
+    let figure = |name: &str| {
+        session
+            .card()
+            .and_then(|c| c.figure(name))
+            .map(|f| f.band.map(seconds))
+    };
+    let brisk = rung.is_some_and(|r| r.timing == "brisk" && r.word != "strap-release");
+    match (
+        brisk,
+        figure("seconds_to_commit"),
+        figure("seconds_at_rate"),
+        rung.and_then(|r| r.planned_ms),
+    ) {
+        (true, Some([low, best, high]), Some([_, _, most]), _) => {
+            format!(
+                "Plan: it starts to go at about {best} s ({low} to {high}), the hinge within {most} s more"
+            )
+        }
+        (_, _, _, Some(ms)) => format!("Plan: about {} s", seconds(ms)),
+        (_, _, _, None) => String::new(),
+    }
 }
 
 fn centred(paper: &mut Paper<'_>, row: u16, words: &str) {
