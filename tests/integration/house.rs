@@ -255,6 +255,13 @@ fn the_gate_runs_exactly_the_readmes_test_command() {
             .lines()
             .any(|line| line == "cargo run --release -- demo")
     );
+    let kept =
+        std::fs::read_to_string(root().join("tests/screens/13-cuts-plunge-ascii.snap")).unwrap();
+    let picture = kept.splitn(3, "---\n").nth(2).unwrap().trim_end();
+    assert!(
+        readme.contains(picture),
+        "the README's picture is the program's own screen"
+    );
     for path in paths_in(&readme) {
         assert!(root().join(&path).exists(), "README names {path}");
     }
