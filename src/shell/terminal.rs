@@ -22,6 +22,7 @@ use ratatui::Terminal;
 use ratatui::backend::CrosstermBackend;
 use ratatui::buffer::Buffer;
 use ratatui::layout::Rect;
+use rustix::event::{PollFd, PollFlags, Timespec, poll};
 use signal_hook::consts::{SIGHUP, SIGINT, SIGTERM};
 
 use crate::tui::Key;
@@ -104,13 +105,19 @@ impl Screen {
         if let Some(end) = ends() {
             return Ok(end);
         }
-        match event::poll(most) {
-            Ok(false) => return Ok(ends().unwrap_or(Heard::Nothing)),
-            Ok(true) => {}
-            Err(error) if error.kind() == io::ErrorKind::Interrupted => {
-                return Ok(ends().unwrap_or(Heard::Nothing));
+        if hung_up(Duration::ZERO)? {
+            return Ok(Heard::End(SIGHUP));
+        }
+        if !event::poll(Duration::ZERO)? {
+            if hung_up(most)? {
+                return Ok(Heard::End(SIGHUP));
             }
-            Err(error) => return Err(error),
+            if let Some(end) = ends() {
+                return Ok(end);
+            }
+            if !event::poll(Duration::ZERO)? {
+                return Ok(Heard::Nothing);
+            }
         }
         Ok(match event::read()? {
             Event::Key(key) if key.kind != KeyEventKind::Release => {
@@ -122,6 +129,21 @@ impl Screen {
                 Heard::Nothing
             }
         })
+    }
+}
+
+/// Waits for keys up to a time; true where the terminal is gone. The library that reads keys would
+/// read its end for ever, so it is asked only while the terminal is there.
+fn hung_up(most: Duration) -> io::Result<bool> {
+    let stdin = io::stdin();
+    let mut keys = [PollFd::new(&stdin, PollFlags::IN)];
+    let time = Timespec::try_from(most).map_err(io::Error::other)?;
+    match poll(&mut keys, Some(&time)) {
+        Ok(_) => Ok(keys[0]
+            .revents()
+            .intersects(PollFlags::HUP | PollFlags::ERR | PollFlags::NVAL)),
+        Err(rustix::io::Errno::INTR) => Ok(false),
+        Err(error) => Err(error.into()),
     }
 }
 

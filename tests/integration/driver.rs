@@ -10,8 +10,8 @@ use portable_pty::{Child, CommandBuilder, MasterPty, PtySize, native_pty_system}
 
 /// The program in a terminal.
 pub(crate) struct Terminal {
-    master: Box<dyn MasterPty + Send>,
-    writer: Box<dyn Write + Send>,
+    master: Option<Box<dyn MasterPty + Send>>,
+    writer: Option<Box<dyn Write + Send>>,
     child: Box<dyn Child + Send + Sync>,
     bytes: Receiver<Vec<u8>>,
     parser: vt100::Parser,
@@ -66,8 +66,8 @@ impl Terminal {
         });
         let writer = pair.master.take_writer().unwrap();
         Self {
-            master: pair.master,
-            writer,
+            master: Some(pair.master),
+            writer: Some(writer),
             child,
             bytes,
             parser: vt100::Parser::new(rows, columns, 0),
@@ -77,10 +77,11 @@ impl Terminal {
 
     /// Types keys; a program that is gone does not hear them.
     pub(crate) fn keys(&mut self, keys: &str) {
-        let _ = self
-            .writer
-            .write_all(keys.as_bytes())
-            .and_then(|()| self.writer.flush());
+        if let Some(writer) = &mut self.writer {
+            let _ = writer
+                .write_all(keys.as_bytes())
+                .and_then(|()| writer.flush());
+        }
     }
 
     fn take(&mut self, chunk: &[u8]) {
@@ -147,7 +148,7 @@ impl Terminal {
         }
         let code = self.child.wait().unwrap().exit_code();
         let screen = self.screen();
-        (code, self.sent, screen)
+        (code, std::mem::take(&mut self.sent), screen)
     }
 
     /// Kills the program where it stands.
@@ -155,6 +156,23 @@ impl Terminal {
         let pid = rustix_pid(self.child.process_id().unwrap());
         let _ = rustix::process::kill_process(pid, rustix::process::Signal::KILL);
         let _ = self.child.wait();
+    }
+
+    /// Takes the terminal away; true where the program ended within the patience.
+    pub(crate) fn hang_up(&mut self) -> bool {
+        self.master = None;
+        self.writer = None;
+        let (_, closed) = channel();
+        // The reading thread lets go of its end at the next byte it cannot hand on.
+        drop(std::mem::replace(&mut self.bytes, closed));
+        let (_pace, pace) = channel::<()>();
+        for _ in 0..600 {
+            if self.child.try_wait().unwrap().is_some() {
+                return true;
+            }
+            let _ = pace.recv_timeout(Duration::from_millis(100));
+        }
+        false
     }
 
     /// Sends a signal.
@@ -172,7 +190,7 @@ impl Terminal {
             pixel_width: 0,
             pixel_height: 0,
         };
-        self.master.resize(size).unwrap();
+        self.master.as_ref().unwrap().resize(size).unwrap();
     }
 
     /// Keys the sensible answer to what the screen asks and waits until it moved on.
@@ -186,6 +204,13 @@ impl Terminal {
             position(screen) != before && is_settled(screen)
         });
         self.look();
+    }
+}
+
+impl Drop for Terminal {
+    fn drop(&mut self) {
+        let _ = self.child.kill();
+        let _ = self.child.wait();
     }
 }
 
@@ -247,7 +272,7 @@ fn digit_for(screen: &str) -> char {
         return '1';
     }
     let open = screen.lines().find_map(|line| {
-        let line = line.split(['│', '|']).nth(1)?.trim_start();
+        let line = right_panel(line);
         let (digit, rest) = line.split_once("  ")?;
         let is_choice = digit.len() == 1 && digit.chars().all(|c| c.is_ascii_digit());
         (is_choice && !rest.contains("keeps it open")).then(|| digit.chars().next())?
@@ -255,13 +280,14 @@ fn digit_for(screen: &str) -> char {
     open.unwrap_or('1')
 }
 
+/// What stands in the right panel of a line.
+fn right_panel(line: &str) -> String {
+    line.chars().skip(30).collect::<String>().trim().to_owned()
+}
+
 /// A whole number for each field: as planned where the screen shows a plan.
 fn numbers_for(screen: &str) -> String {
-    let panel: Vec<&str> = screen
-        .lines()
-        .filter_map(|l| l.split(['│', '|']).nth(1))
-        .map(str::trim)
-        .collect();
+    let panel: Vec<String> = screen.lines().map(right_panel).collect();
     let planned = |label: &str| {
         let line = panel
             .iter()

@@ -129,6 +129,7 @@ fn a_hundred_kills_lose_nothing_that_was_shown_as_recorded() {
                 || s.contains("seconds gone")
                 || s.contains("CLOSED")
         });
+        terminal.look();
         let kept = answers_on_disk(&job);
         assert!(
             kept.starts_with(&acknowledged),
@@ -182,6 +183,19 @@ fn signals_end_it_with_the_terminal_restored() {
         assert_restored_once(&sent);
         assert!(String::from_utf8_lossy(&sent).contains("record code"));
     }
+}
+
+#[test]
+fn a_terminal_that_goes_away_ends_it() {
+    let folder = tempfile::tempdir().unwrap();
+    let job = folder.path().join("job");
+    let job_word = job.to_str().unwrap();
+    let mut terminal = Terminal::start(&["demo", "--job", job_word], (80, 24), folder.path());
+    terminal.wait("roll call", |s| s.contains("> 1 >"));
+    assert!(terminal.hang_up(), "the program ends with its terminal");
+    // The record is free again and goes on.
+    let mut again = Terminal::start(&["demo", "--job", job_word], (80, 24), folder.path());
+    again.wait("roll call", |s| s.contains("> 1 >"));
 }
 
 #[test]
