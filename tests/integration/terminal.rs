@@ -128,6 +128,7 @@ fn a_hundred_kills_lose_nothing_that_was_shown_as_recorded() {
                 || s.contains(" > ")
                 || s.contains("seconds gone")
                 || s.contains("CLOSED")
+                || s.contains("the day of this record is closed")
         });
         terminal.look();
         let kept = answers_on_disk(&job);
@@ -136,12 +137,14 @@ fn a_hundred_kills_lose_nothing_that_was_shown_as_recorded() {
             "what was shown as recorded is there after kill {kills}"
         );
         for _ in 0..random.throw() % 4 {
-            if terminal.screen().contains("THE DAY IS CLOSED") {
+            let screen = terminal.screen();
+            if screen.contains("THE DAY IS CLOSED") || screen.contains("record is closed") {
                 break;
             }
             terminal.answer();
         }
-        if terminal.screen().contains("THE DAY IS CLOSED") {
+        let closed = ["THE DAY IS CLOSED", "the day of this record is closed"];
+        if closed.iter().any(|words| terminal.screen().contains(words)) {
             terminal.kill();
             std::fs::remove_dir_all(&job).unwrap();
             acknowledged.clear();
