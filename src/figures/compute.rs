@@ -176,13 +176,13 @@ fn cases(input: &TreeInput, model: &Model, sums: (&Columns, &WorstCase)) -> (Cas
     let side_matters = worst.side_ratio.is_some_and(|ratio| ratio < SIDE_MATTERS);
     let mut margins: Vec<f64> = if side_matters {
         columns
-            .split
+            .margin
             .iter()
             .zip(&columns.side_margin)
             .map(|(split, side)| split.min(*side))
             .collect()
     } else {
-        columns.split.clone()
+        columns.margin.clone()
     };
     let doubts = ranked(&margins);
     let quantiles = twenty(&mut margins);

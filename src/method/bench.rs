@@ -17,7 +17,9 @@ const OPENING: Angle = Angle::deg(70.0);
 /// The back cut's height above the apex where the plan gives none. Source: an inch and more
 /// (opened in several rule sets).
 const BACK_CUT_HEIGHT: Length = Length::cm(3.0);
-/// How finely the race is not asked: the width to which a commit is solved, metres.
+/// The side lean from which it is said. Source: our judgement.
+const SIDE_LEAN_SAID: Angle = Angle::deg(2.0);
+/// The width to which a commit is solved, metres.
 const WIDTH: f64 = 1.0e-9;
 
 /// A tree on the bench.
@@ -203,6 +205,21 @@ impl Assessed {
         (!ratio_reaches(ratio, 1.0)).then(|| {
             format!(
                 "at worst the hinge has only {ratio:.2} of the side strength that the side lean asks: set a line on the side away from the lean, or choose a lay nearer to the lean"
+            )
+        })
+    }
+
+    /// What a side lean asks, in a sentence, from the lean at which it is worth saying.
+    pub(super) fn side_reason(&self, bench: &Bench<'_>) -> Option<String> {
+        let lean = libm::atan2(bench.tree.right, bench.tree.height);
+        let ratio = self.worst.side_ratio?;
+        let wanted = bench.table.side_ratio_wanted;
+        let worth = lean.abs() >= SIDE_LEAN_SAID.value() || !ratio_reaches(ratio, wanted);
+        worth.then(|| {
+            let side = if lean < 0.0 { "left" } else { "right" };
+            format!(
+                "the weight leans {:.1} deg to the {side} of the lay: at worst the hinge has {ratio:.2} times the side strength asked; wedge or line on that side, and nobody stands under it",
+                lean.abs().to_degrees()
             )
         })
     }

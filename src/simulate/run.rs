@@ -141,12 +141,16 @@ pub fn run(stump: &Stump, steps: &[Step]) -> Result<Run, SimulateError> {
         apex: None,
         sloped: false,
         prop: Prop::Nothing,
+        propped_next: false,
         past: Verdict::Holds,
         states: Vec::new(),
     };
     for (index, step) in steps.iter().enumerate() {
         match &step.act {
-            StepAct::Cut(cut) => walk.cut(index + 1, cut)?,
+            StepAct::Cut(cut) => {
+                walk.propped_next = propped_next(&steps[index + 1..]);
+                walk.cut(index + 1, cut)?;
+            }
             StepAct::Do(Task::Wedge | Task::LineTension) => walk.prop = Prop::WedgeOrLine,
             StepAct::Do(Task::Clear | Task::Retreat)
             | StepAct::Check { .. }
@@ -181,8 +185,18 @@ struct Walk<'a> {
     apex: Option<f64>,
     sloped: bool,
     prop: Prop,
+    /// Whether a wedge or a line comes before the next cut.
+    propped_next: bool,
     past: Verdict,
     states: Vec<State>,
+}
+
+/// Whether a wedge is set or a line tensioned before the next cut.
+fn propped_next(steps: &[Step]) -> bool {
+    steps
+        .iter()
+        .take_while(|step| !matches!(step.act, StepAct::Cut(_)))
+        .any(|step| matches!(step.act, StepAct::Do(Task::Wedge | Task::LineTension)))
 }
 
 impl Walk<'_> {
@@ -210,7 +224,7 @@ impl Walk<'_> {
             } else {
                 CENTIMETRE * f64::from(index)
             };
-            let now = if last && cutting == Cutting::Rear {
+            let now = if last && cutting == Cutting::Rear && !self.propped_next {
                 Cutting::RearEnd
             } else {
                 cutting

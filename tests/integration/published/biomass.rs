@@ -58,7 +58,7 @@ fn a_twig_is_refused() {
 fn a_height_aware_method_within_a_quarter_for_a_tall_tree_and_not_for_a_short_one() {
     // GTR-WO-104, example 1: Douglas-fir of 20 in and 110 ft, 3154.554 lb dry in all.
     let tall = dry_mass(BiomassGroup::DouglasFir, Length::cm(50.8)).unwrap();
-    let published = 3154.553_992_672_5 * 0.453_592_37;
+    let published = 3_154.553_992_672_5 * 0.453_592_37;
     assert!((tall.value() / published - 1.0).abs() < 0.25);
     // Example 2: red maple of 11.1 in and 38 ft, 532.585 lb: diameter alone is 64 % too heavy.
     let short = dry_mass(BiomassGroup::SoftMapleBirch, Length::cm(11.1 * 2.54)).unwrap();
