@@ -317,3 +317,36 @@ fn step_on(state: (f64, f64), cut: f64, at: [Standing; 3], course: &Course) -> (
         state.1 + cut / 6.0 * (k1.1 + 2.0 * k2.1 + 2.0 * k3.1 + k4.1),
     )
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::mechanics::section::Stem;
+
+    #[test]
+    fn coarse_runs_and_small_angles_stand_for_the_fine_ones() {
+        let stem = Stem::new(Length::cm(45.0), Length::cm(45.0)).unwrap();
+        let faced = Faced::new(stem.shape(), 0.15, None);
+        for (forward, rate) in [(0.9, 0.0045), (1.0, 0.0030), (1.2, 0.0050)] {
+            let load = Load {
+                weight: 15_000.0,
+                forward,
+                extra: 0.0,
+            };
+            let course = Course {
+                mor: 57.0e6,
+                load,
+                height: 8.0,
+                inertia: 140_000.0,
+                rate,
+                commit: faced.meets(57.0e6, load, 1.0e-13),
+                hinge: 0.045,
+            };
+            let tilt = |step: f64| course.run(&faced, step).tilt.unwrap();
+            let (fine, coarse) = (tilt(FINE), tilt(COARSE));
+            assert!((coarse / fine - 1.0).abs() < 2.0e-3, "{coarse} {fine}");
+            let (exact, small) = course.rate_needed(&faced, Angle::deg(5.0).value()).unwrap();
+            assert!((small / exact - 1.0).abs() < 5.0e-3, "{small} {exact}");
+        }
+    }
+}

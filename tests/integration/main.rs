@@ -3,5 +3,8 @@
 mod published;
 mod sample;
 mod virtual_stump;
+mod virtual_stump_odd;
 mod mechanics_properties;
+mod tree_properties;
 mod method_choice;
+mod tree_figures;

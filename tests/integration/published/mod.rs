@@ -8,6 +8,7 @@ mod biomass;
 mod escape_and_rigging;
 mod fall;
 mod green_weight;
+mod race;
 mod section;
 mod species_table;
 mod split_derived;
