@@ -3,13 +3,14 @@
 
 use crate::figures::{AtCommit, CaseTree, Cuts, Stretch, at_commit, cautious_extras, stretch};
 use crate::figures::{Layout, Model, Release, TreeInput, WorstCase, worst_case};
-use crate::mechanics::holding::Faced;
+use crate::mechanics::holding::{Demand, Faced};
 use crate::mechanics::splitting::Strength;
 use crate::mechanics::strap::thickness_min_of;
 use crate::method::judgement::Judgement;
 use crate::method::words::{on_tape, ratio_reaches, tape_above, tape_below};
 use crate::plan::step::MethodName;
-use crate::units::{Angle, Length};
+use crate::simulate::Stump;
+use crate::units::{Angle, Force, Length, Moment};
 
 /// The face's opening where the plan gives none. Source: open faces of 70 degrees and more
 /// (opened in several rule sets).
@@ -227,5 +228,21 @@ impl Assessed {
     /// Whether only the demand's back end is negative: a wedge goes in before the hinge.
     pub(super) fn wants_wedge(&self) -> bool {
         self.demand >= 0.0 && self.worst.demand_back.value() < 0.0
+    }
+}
+
+/// The virtual stump of a tree by its central readings.
+pub(super) fn stump_of_model(input: &TreeInput, model: &Model, table: &Judgement) -> Stump {
+    let tree = model.central();
+    let nose = input.saw.map_or(Length::ZERO, |saw| saw.nose);
+    Stump {
+        stem: model.stem.clone(),
+        wood: model.wood,
+        demand: Demand {
+            weight: Force::si(tree.weight()),
+            forward: Length::si(tree.forward),
+            extra: Moment::ZERO,
+        },
+        wedge_room: nose + table.wedge_room,
     }
 }

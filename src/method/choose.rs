@@ -2,9 +2,8 @@
 //! choice and every refusal comes with its sentence; a refusal is an answer, not a failure.
 
 use crate::figures::SiteStop;
-use crate::method::bench::{Assessed, Bench};
+use crate::method::bench::{Assessed, Bench, stump_of_model};
 use crate::method::lay_out::steps;
-use crate::method::size_up::stump_of_model;
 use crate::method::{brisk, plunge, relieved, rigged, straight, tilted, wedged};
 use crate::plan::step::{Cut, MethodName};
 use crate::simulate::{Run, Verdict, run};

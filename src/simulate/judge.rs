@@ -5,8 +5,8 @@ use crate::mechanics::holding::Load;
 use crate::mechanics::section::{Section, Stem};
 use crate::mechanics::splitting::{Slabs, Strength, split_mixed};
 use crate::mechanics::strap::Parts;
-use crate::simulate::run::Stump;
 use crate::simulate::standing::Standing;
+use crate::simulate::stump::Stump;
 use crate::units::{Length, Stress};
 
 /// The compression ahead of a level face cut, made before the sloping one, at which the bar is

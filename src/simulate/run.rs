@@ -3,32 +3,20 @@
 
 use thiserror::Error;
 
-use crate::mechanics::holding::{Demand, FacedStem, Wood};
-use crate::mechanics::section::{Section, Stem};
+use crate::mechanics::holding::FacedStem;
+use crate::mechanics::section::Section;
 use crate::mechanics::splitting::{Crossing, crossing};
 use crate::plan::step::{Cut, Edge, Step, StepAct, Task};
 use crate::simulate::advance::{Advance, advance_by, length_of};
 use crate::simulate::judge::{Cutting, Judged, Prop, Verdict, judge};
 use crate::simulate::standing::{Standing, StandingPiece};
+use crate::simulate::stump::Stump;
 use crate::units::{Area, Length, Moment};
 
 /// How far apart the states inside a progressive cut are.
 const CENTIMETRE: f64 = 0.01;
 /// The most states kept of one cut: past it, the cut is no stem's.
 const STATES_MAX: u32 = 2_000;
-
-/// The stump before the first cut, and what the tree asks of it.
-#[derive(Debug, Clone, PartialEq)]
-pub struct Stump {
-    /// The stem.
-    pub stem: Stem,
-    /// Its wood.
-    pub wood: Wood,
-    /// What the tree asks.
-    pub demand: Demand,
-    /// The depth of back cut from which a wedge can be set behind the bar.
-    pub wedge_room: Length,
-}
 
 /// Why a sequence cannot be run.
 #[derive(Debug, Clone, Copy, PartialEq, Error)]

@@ -7,7 +7,7 @@ use stumpside::figures::{
 use stumpside::mechanics::section::Cavity;
 use stumpside::method::{Choice, size_up};
 use stumpside::species;
-use stumpside::units::{Bearing, Length, Mass, Reading};
+use stumpside::units::{Angle, Bearing, Length, Mass, Reading};
 
 use crate::sample::{MILD, Sample, input, metres};
 
@@ -154,4 +154,25 @@ fn a_lean_and_weight_that_no_trunk_carries_are_mis_measured() {
     let answer = size_up(&tree);
     assert_eq!(answer.choice, Choice::Refuse);
     assert!(answer.refused[0].reason.contains("mis-measured"));
+}
+
+#[test]
+fn a_face_that_closes_early_no_longer_protects_the_stem() {
+    let state = |lean: f64, change: &dyn Fn(&mut TreeInput)| {
+        let mut tree = input(Sample {
+            lean_deg: lean,
+            ..MILD
+        });
+        change(&mut tree);
+        let cases = size_up(&tree).figures.cases;
+        (cases.state, cases.lowered_by.len())
+    };
+    let narrow = |tree: &mut TreeInput| tree.overrides.opening = Some(Angle::deg(25.0));
+    let bypass = |tree: &mut TreeInput| tree.bypass = Some(Length::mm(8.0));
+    assert_eq!(state(1.0, &narrow), (CaseState::WithinLimit, 0));
+    for close in [&narrow as &dyn Fn(&mut TreeInput), &bypass] {
+        assert_eq!(state(5.0, close), (CaseState::NearLimit, 1));
+        assert_eq!(state(14.0, close).0, CaseState::PastLimit);
+    }
+    assert_eq!(state(14.0, &|_| {}).1, 0);
 }
