@@ -50,6 +50,7 @@ pub(super) struct Columns {
     pub back_area: Column,
     pub commit: Column,
     pub split: Column,
+    pub margin: Column,
     pub side_margin: Column,
     pub stretch: Column,
     pub stretch_area: Column,
@@ -81,6 +82,7 @@ pub(super) struct Figures {
     pub back_area: f64,
     pub commit: f64,
     pub split: f64,
+    pub margin: f64,
     pub side_margin: f64,
     pub stretch: f64,
     pub stretch_area: f64,
@@ -240,6 +242,7 @@ impl<'a> Setting<'a> {
             back_area,
             commit: at.commit,
             split: at.split_ratio,
+            margin: at.margin,
             side_margin: side_ratio(&plain, hinge, made.strength.mor, sideways),
             stretch: (at.commit - hinge).max(0.0),
             stretch_area,
@@ -266,12 +269,12 @@ impl<'a> Setting<'a> {
         start: (&Faced<'_>, &f64, Fineness),
     ) -> (Option<f64>, Option<f64>) {
         let (faced, commit, fineness) = start;
-        if *commit <= made.cuts.hinge {
-            return (Some(0.0), Some(0.0));
-        }
         let (Some(inertia), Some(rate)) = (tree.inertia, made.rate) else {
             return (None, None);
         };
+        if *commit <= made.cuts.hinge {
+            return (Some(0.0), Some(0.0));
+        }
         let course = Course {
             mor: made.strength.mor,
             load: tree.load(made.wind),
@@ -330,6 +333,7 @@ impl Columns {
             back_area: column(),
             commit: column(),
             split: column(),
+            margin: column(),
             side_margin: column(),
             stretch: column(),
             stretch_area: column(),
@@ -362,6 +366,7 @@ impl Columns {
         self.back_area.push(case.back_area);
         self.commit.push(case.commit);
         self.split.push(case.split);
+        self.margin.push(case.margin);
         self.side_margin.push(case.side_margin);
         self.stretch.push(case.stretch);
         self.stretch_area.push(case.stretch_area);

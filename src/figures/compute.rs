@@ -1,18 +1,18 @@
 //! Puts the figures of one tree together. It chooses nothing: the cuts are given.
 
-use crate::figures::bands::{band, twenty};
+use crate::figures::bands::band;
 use crate::figures::brisk::{brisk, escape, fall};
 use crate::figures::cases::{Columns, Figures, Setting};
-use crate::figures::doubt::{Doubt, ranked};
-use crate::figures::input::{Condition, TreeInput, WoodState};
+use crate::figures::input::TreeInput;
 use crate::figures::layout::Layout;
 use crate::figures::model::{CannotSay, Model};
 use crate::figures::read::plan_along;
+use crate::figures::state::{cases, early_close};
 use crate::figures::tree::{
     BackCutFigures, CaseState, Cases, CentreFigures, CrossingBand, FaceFigures, PlungeFigures,
     StrapFigures, TreeFigures, Why,
 };
-use crate::figures::worst::{WorstCase, worst_case};
+use crate::figures::worst::worst_case;
 use crate::mechanics::rigging::{Place, lever, winch_tension};
 use crate::mechanics::zone::{ring_radius, sector_half_angle};
 use crate::units::{Angle, Area, Band, Bearing, Force, GRAVITY, Length, Mass, Moment};
@@ -21,11 +21,6 @@ use crate::units::{Angle, Area, Band, Bearing, Force, GRAVITY, Length, Mass, Mom
 pub(crate) const PLUNGE_CLEAR: Length = Length::mm(25.0);
 /// The least room for a plunge. Source: our judgement.
 pub(crate) const PLUNGE_ROOM_MIN: Length = Length::mm(15.0);
-/// The worst credible side ratio below which side steering enters the margin. Source: our
-/// judgement.
-pub(crate) const SIDE_MATTERS: f64 = 2.0;
-/// The lean from which a species of high growth stress lowers the state. Source: our judgement.
-const GROWTH_STRESS_LEAN: Angle = Angle::deg(5.0);
 
 /// Every figure of one tree. Without a model, or without cuts, what rests on them cannot be said.
 pub fn figures(
@@ -52,7 +47,8 @@ fn whole(input: &TreeInput, model: &Model, layout: &Layout) -> TreeFigures {
     weight_figures(&mut figures, (&mut columns, &best));
     lean_figures(&mut figures, (&mut columns, &best), input);
     // Before any column is reordered: the ranking needs the cases in their own order.
-    let (cases, doubts) = cases(input, model, (&columns, &worst));
+    let early = early_close(input, model, layout);
+    let (cases, doubts) = cases(input, model, (&columns, &worst, early));
     figures.cases = cases;
     figures.doubts = doubts;
     cut_figures(&mut figures, (&mut columns, &best), (model, layout));
@@ -168,61 +164,6 @@ fn side_and_lift(figures: &mut TreeFigures, cases: (&mut Columns, &Figures)) {
     figures.side_margin = Some(margin.map(|ratio| ratio.is_finite().then_some(ratio)));
     let lift = band(&mut columns.lift, best.lift);
     figures.wedge_lift = (lift.high > 0.0).then(|| lift.map(Length::si));
-}
-
-/// The twenty cases, and the doubts ranked.
-fn cases(input: &TreeInput, model: &Model, sums: (&Columns, &WorstCase)) -> (Cases, Vec<Doubt>) {
-    let (columns, worst) = sums;
-    let side_matters = worst.side_ratio.is_some_and(|ratio| ratio < SIDE_MATTERS);
-    let mut margins: Vec<f64> = if side_matters {
-        columns
-            .split
-            .iter()
-            .zip(&columns.side_margin)
-            .map(|(split, side)| split.min(*side))
-            .collect()
-    } else {
-        columns.split.clone()
-    };
-    let doubts = ranked(&margins);
-    let quantiles = twenty(&mut margins);
-    let past = quantiles.iter().filter(|margin| **margin < 1.0).count();
-    let lowered_by = lowered_by(input, model);
-    let mut state = CaseState::of_twenty(past);
-    if !lowered_by.is_empty() {
-        state = state.lowered();
-    }
-    if model.concern.is_some() {
-        state = CaseState::CannotSay;
-    }
-    let cases = Cases {
-        of: quantiles.len(),
-        past_limit: Some(past),
-        state,
-        margins: quantiles.to_vec(),
-        lowered_by,
-    };
-    (cases, doubts)
-}
-
-fn lowered_by(input: &TreeInput, model: &Model) -> Vec<&'static str> {
-    let tree = model.central();
-    let lean = libm::atan2(libm::hypot(tree.forward, tree.right), tree.height);
-    let leans = lean >= GROWTH_STRESS_LEAN.value();
-    let mut words = Vec::new();
-    if input.has(Condition::TensionWood) {
-        words.push("tension wood was seen: locked-in stress can halve the margin");
-    } else if input.species.growth_stress() && leans {
-        words.push("this species grows high stress in a leaning stem: it can halve the margin");
-    }
-    match input.wood_state {
-        WoodState::Live => {}
-        WoodState::Frozen => words.push("frozen wood holds longer and splits sooner"),
-        WoodState::Dead => {
-            words.push("dead wood is dry and brittle: it holds longer and splits sooner")
-        }
-    }
-    words
 }
 
 /// The line's lever about the planned hinge.

@@ -218,6 +218,8 @@ pub struct TreeInput {
     pub wedges: u8,
     /// A line to pull with.
     pub line: Option<Line>,
+    /// How far the face's two cuts cross at the apex, where that was measured: a bypass.
+    pub bypass: Option<Length>,
     /// What the plan fixes about the cuts.
     pub overrides: Overrides,
     /// The diameter from which the crew calls a tree large.
@@ -262,6 +264,7 @@ impl TreeInput {
             ways_out: Vec::new(),
             wedges: 0,
             line: None,
+            bypass: None,
             overrides: Overrides::default(),
             large: LARGE_DEFAULT,
             face_share_max: FACE_SHARE_MAX_DEFAULT,

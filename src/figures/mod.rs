@@ -11,6 +11,7 @@ mod layout;
 mod model;
 mod read;
 mod sobol;
+mod state;
 mod tree;
 mod worst;
 

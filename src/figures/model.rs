@@ -45,7 +45,7 @@ pub(super) mod draw {
 #[derive(Debug, Clone, Copy, PartialEq, Error)]
 pub enum CannotSay {
     /// A reading that is missing.
-    #[error("the {0} is missing")]
+    #[error("no {0} is given")]
     Missing(&'static str),
     /// A reading out of the models' range.
     #[error("the {what} is {value} {unit}, and the models hold from {least} to {most}")]

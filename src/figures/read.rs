@@ -51,11 +51,35 @@ pub(super) fn stump(input: &TreeInput) -> Result<Stem, CannotSay> {
             (5.0, 400.0),
         )?;
     }
+    planned_cuts(input, along.value)?;
     let mut stem = Stem::new(along.value, across.value)?;
     for cavity in &input.cavities {
         stem = stem.with_cavity(*cavity)?;
     }
     Ok(stem)
+}
+
+/// Depths the plan fixes must leave a face, a hinge and wood behind it.
+fn planned_cuts(input: &TreeInput, along: Length) -> Result<(), CannotSay> {
+    let cuts = &input.overrides;
+    let diameter = along.in_cm();
+    let face = cuts.face_depth.map_or(0.0, Length::in_cm);
+    if cuts.face_depth.is_some() {
+        ranged("face depth", "cm", face, (0.5, 0.9 * diameter))?;
+    }
+    if let Some(hinge) = cuts.hinge {
+        let most = (diameter - face) * 0.9;
+        ranged("hinge thickness", "cm", hinge.in_cm(), (0.5, most))?;
+    }
+    if let Some(strap) = cuts.strap {
+        ranged(
+            "strap thickness",
+            "cm",
+            strap.in_cm(),
+            (0.5, 0.9 * diameter),
+        )?;
+    }
+    Ok(())
 }
 
 pub(super) fn tree(input: &TreeInput) -> Result<Tree, Vec<CannotSay>> {
@@ -121,7 +145,7 @@ fn parts(input: &TreeInput) -> Result<Parts, Vec<CannotSay>> {
     let crown = match input.crown {
         CrownInput::Measured(crown) => Ok(Some(crown)),
         CrownInput::NoCrown => Ok(None),
-        CrownInput::Missing => Err(CannotSay::Missing("crown's base and four radii")),
+        CrownInput::Missing => Err(CannotSay::Missing("crown base with four radii")),
     };
     let (height, dbh, crown) = match (height, dbh, crown) {
         (Ok(height), Ok(dbh), Ok(crown)) => (height, dbh, crown),
@@ -162,8 +186,8 @@ fn routes(input: &TreeInput, dbh: Length, height: f64) -> Option<[(f64, f64); 2]
 
 /// The larger of the two masses, the stem's share of it, and its doubt.
 fn masses(input: &TreeInput, dbh: Length, height: f64) -> Result<(f64, f64, f64), CannotSay> {
-    let [one, other] = routes(input, dbh, height)
-        .ok_or(CannotSay::Missing("diameter within the biomass equations"))?;
+    let [one, other] =
+        routes(input, dbh, height).ok_or(CannotSay::Missing("diameter of 2.5 cm or more"))?;
     let (larger, smaller) = if one.0 >= other.0 {
         (one, other)
     } else {

@@ -28,7 +28,7 @@ const RUN_STEP: f64 = 0.02;
 /// The worst credible case.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct WorstCase {
-    /// Splitting over asked, at commit.
+    /// Splitting over asked: the least from commit to the hinge.
     pub split_ratio: f64,
     /// Elastic side strength over asked at the planned hinge; `None` without a side demand.
     pub side_ratio: Option<f64>,
@@ -88,7 +88,14 @@ pub(crate) struct AtCommit {
     pub commit: f64,
     /// Splitting over the smaller of asked and held.
     pub split_ratio: f64,
+    /// The least of that ratio from commit on to the hinge: the cut goes on while the tree moves,
+    /// and the hinge then passes on no more than it holds.
+    pub margin: f64,
 }
+
+/// The share of the ligament's whole from which the least ratio may lie after commit. Below it
+/// the ratio only grows as the cut goes on.
+const THICK: f64 = 0.4;
 
 /// Splitting at commit. With a strap the finished hinge is judged alone. A tree that does not go
 /// by itself is bent over by wedge or line, so then its hinge's own holding is the demand.
@@ -111,10 +118,44 @@ pub(crate) fn at_commit(
     let hold = strength.mor * standing.modulus;
     let asked = load.about(standing.centroid);
     let demand = if asked > 0.0 { asked.min(hold) } else { hold };
+    let split_ratio = split_at(faced, ligament, strength) / demand;
+    let margin = if commit > THICK * faced.whole() && cuts.release != Release::Strap {
+        split_ratio.min(least_after(faced, strength, ligament))
+    } else {
+        split_ratio
+    };
     AtCommit {
         commit,
-        split_ratio: split_at(faced, ligament, strength) / demand,
+        split_ratio,
+        margin,
     }
+}
+
+/// The least splitting over holding between a thick ligament at commit and a thinner one, by the
+/// golden section: over that stretch the ratio falls and then rises, or only falls.
+fn least_after(faced: &Faced<'_>, strength: &Strength, commit: f64) -> f64 {
+    const GOLDEN: f64 = 0.618_033_988_749_894_9;
+    let ratio = |thickness: f64| {
+        let held = strength.mor * faced.ligament(thickness).modulus;
+        split_at(faced, thickness, strength) / held
+    };
+    let (mut low, mut high) = (0.75 * THICK * faced.whole(), commit);
+    let (mut left, mut right) = (high - GOLDEN * (high - low), low + GOLDEN * (high - low));
+    let (mut at_left, mut at_right) = (ratio(left), ratio(right));
+    for _ in 0..20 {
+        if at_left < at_right {
+            high = right;
+            (right, at_right) = (left, at_left);
+            left = high - GOLDEN * (high - low);
+            at_left = ratio(left);
+        } else {
+            low = left;
+            (left, at_left) = (right, at_right);
+            right = low + GOLDEN * (high - low);
+            at_right = ratio(right);
+        }
+    }
+    at_left.min(at_right)
 }
 
 /// A side moment that is none but for rounding, N·m.
@@ -168,7 +209,7 @@ pub fn worst_case(input: &TreeInput, model: &Model, layout: &Layout) -> WorstCas
     let side = (sideways + side_up).abs().max((sideways - side_down).abs());
     let side = side_ratio(&planned, cuts.hinge, base.mor, side);
     WorstCase {
-        split_ratio: split.split_ratio,
+        split_ratio: split.margin,
         side_ratio: side.is_finite().then_some(side),
         demand_forward: Moment::si(tree.load(up).about(centroid)),
         demand_back: Moment::si(tree.load(down).about(centroid)),

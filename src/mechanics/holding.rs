@@ -2,7 +2,7 @@
 //! It never counts the wood's plastic reserve twice: the modulus of rupture already holds it.
 
 use crate::mechanics::root;
-use crate::mechanics::section::{Section, SectionError, Shape, Stem, Sums};
+use crate::mechanics::section::{Ellipse, Section, SectionError, Shape, Stem, Sums};
 use crate::units::{Force, FractureEnergy, Length, Moment, Stress};
 
 /// The share of the holding moment at which the tree first moves.
@@ -141,6 +141,14 @@ pub(crate) struct Tongue {
     pub front: f64,
 }
 
+impl Tongue {
+    /// The edge behind which the outline is narrower than the tongue.
+    fn narrow_from(&self, outline: Ellipse) -> f64 {
+        let share = self.width / (2.0 * outline.a * outline.k);
+        -outline.a * (1.0 - share * share).max(0.0).sqrt()
+    }
+}
+
 /// A faced stem in plain numbers, with what lies beyond its apex and the whole kept at hand.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub(crate) struct Faced<'a> {
@@ -187,7 +195,13 @@ impl<'a> Faced<'a> {
             Some(tongue) if rear < tongue.front => {
                 width = width.min(tongue.width);
                 let hinge = self.shape.beyond(tongue.front).minus(self.beyond_apex);
-                hinge.plus(rectangle(rear, tongue.front, width))
+                // At the very rear the outline is narrower than the tongue.
+                let narrow = tongue.narrow_from(self.shape.ellipse);
+                let mut sums = hinge.plus(rectangle(rear.max(narrow), tongue.front, tongue.width));
+                if rear < narrow {
+                    sums = sums.plus(self.shape.strip(rear, narrow));
+                }
+                sums
             }
             Some(_) | None => self.shape.beyond(rear).minus(self.beyond_apex),
         };

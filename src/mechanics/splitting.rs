@@ -4,7 +4,7 @@
 use crate::mechanics::bisect;
 use crate::mechanics::holding::{Faced, FacedStem, Wood};
 use crate::mechanics::section::{Stem, Sums};
-use crate::units::{Area, Density, Force, FractureEnergy, Length, Moment, SecondMoment};
+use crate::units::{Area, Density, Force, FractureEnergy, Length, Moment, SecondMoment, Stress};
 
 /// Sliding over opening fracture energy.
 /// Source: tests of softwoods give 2 to 4 (from memory); three is used throughout.
@@ -145,10 +145,15 @@ impl Slabs {
     /// # Source
     /// The way of EN 1995-1-1, 6.5.2, in the limit of pure bending.
     pub fn split_moment_total(&self, wood: &Wood) -> Option<Moment> {
-        let (opening, sliding) = self.flexibility();
-        let value =
-            (2.0 * wood.moe.value() * self.width * wood.g1c.value() / (opening + sliding)).sqrt();
-        value.is_finite().then(|| Moment::si(value))
+        pure_bending_split(
+            Length::si(self.width),
+            (
+                SecondMoment::si(self.front.inline()),
+                SecondMoment::si(self.full.inline()),
+            ),
+            wood.moe,
+            wood.g1c,
+        )
     }
 
     fn flexibility(&self) -> (f64, f64) {
@@ -171,6 +176,29 @@ impl Slab {
             i_inline: SecondMoment::si(sums.inline()),
         })
     }
+}
+
+/// The moment that runs a crack along a beam of any section under bending alone: second moments
+/// of the part that goes on carrying and of the whole.
+///
+/// # Model
+/// `√[2Eb G_c/(1/I_f − 1/I_0)]`.
+/// # Valid for
+/// Shear left out: of a leaning tree it is less than a thousandth. `None` where the part is the
+/// whole.
+/// # Source
+/// Exact for pure bending; the limit of Gustafsson 1988, CIB-W18A/21-10-1, and of EN 1995-1-1,
+/// 6.5.2.
+pub fn pure_bending_split(
+    width: Length,
+    inertias: (SecondMoment, SecondMoment),
+    moe: Stress,
+    energy: FractureEnergy,
+) -> Option<Moment> {
+    let (part, whole) = inertias;
+    let flexibility = 1.0 / part.value() - 1.0 / whole.value();
+    let square = 2.0 * moe.value() * width.value() * energy.value() / flexibility;
+    (flexibility > 0.0 && square.is_finite()).then(|| Moment::si(square.max(0.0).sqrt()))
 }
 
 /// Where holding and splitting cross.

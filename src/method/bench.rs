@@ -3,13 +3,14 @@
 
 use crate::figures::{AtCommit, CaseTree, Cuts, Stretch, at_commit, cautious_extras, stretch};
 use crate::figures::{Layout, Model, Release, TreeInput, WorstCase, worst_case};
-use crate::mechanics::holding::Faced;
+use crate::mechanics::holding::{Demand, Faced};
 use crate::mechanics::splitting::Strength;
 use crate::mechanics::strap::thickness_min_of;
 use crate::method::judgement::Judgement;
 use crate::method::words::{on_tape, ratio_reaches, tape_above, tape_below};
 use crate::plan::step::MethodName;
-use crate::units::{Angle, Length};
+use crate::simulate::Stump;
+use crate::units::{Angle, Force, Length, Moment};
 
 /// The face's opening where the plan gives none. Source: open faces of 70 degrees and more
 /// (opened in several rule sets).
@@ -17,7 +18,9 @@ const OPENING: Angle = Angle::deg(70.0);
 /// The back cut's height above the apex where the plan gives none. Source: an inch and more
 /// (opened in several rule sets).
 const BACK_CUT_HEIGHT: Length = Length::cm(3.0);
-/// How finely the race is not asked: the width to which a commit is solved, metres.
+/// The side lean from which it is said. Source: our judgement.
+const SIDE_LEAN_SAID: Angle = Angle::deg(2.0);
+/// The width to which a commit is solved, metres.
 const WIDTH: f64 = 1.0e-9;
 
 /// A tree on the bench.
@@ -207,8 +210,39 @@ impl Assessed {
         })
     }
 
+    /// What a side lean asks, in a sentence, from the lean at which it is worth saying.
+    pub(super) fn side_reason(&self, bench: &Bench<'_>) -> Option<String> {
+        let lean = libm::atan2(bench.tree.right, bench.tree.height);
+        let ratio = self.worst.side_ratio?;
+        let wanted = bench.table.side_ratio_wanted;
+        let worth = lean.abs() >= SIDE_LEAN_SAID.value() || !ratio_reaches(ratio, wanted);
+        worth.then(|| {
+            let side = if lean < 0.0 { "left" } else { "right" };
+            format!(
+                "the weight leans {:.1} deg to the {side} of the lay: at worst the hinge has {ratio:.2} times the side strength asked; wedge or line on that side, and nobody stands under it",
+                lean.abs().to_degrees()
+            )
+        })
+    }
+
     /// Whether only the demand's back end is negative: a wedge goes in before the hinge.
     pub(super) fn wants_wedge(&self) -> bool {
         self.demand >= 0.0 && self.worst.demand_back.value() < 0.0
+    }
+}
+
+/// The virtual stump of a tree by its central readings.
+pub(super) fn stump_of_model(input: &TreeInput, model: &Model, table: &Judgement) -> Stump {
+    let tree = model.central();
+    let nose = input.saw.map_or(Length::ZERO, |saw| saw.nose);
+    Stump {
+        stem: model.stem.clone(),
+        wood: model.wood,
+        demand: Demand {
+            weight: Force::si(tree.weight()),
+            forward: Length::si(tree.forward),
+            extra: Moment::ZERO,
+        },
+        wedge_room: nose + table.wedge_room,
     }
 }

@@ -2,10 +2,8 @@
 //! choice and every refusal comes with its sentence; a refusal is an answer, not a failure.
 
 use crate::figures::SiteStop;
-use crate::method::bench::{Assessed, Bench};
+use crate::method::bench::{Assessed, Bench, stump_of_model};
 use crate::method::lay_out::steps;
-use crate::method::size_up::stump_of_model;
-use crate::method::words::length_keeps;
 use crate::method::{brisk, plunge, relieved, rigged, straight, tilted, wedged};
 use crate::plan::step::{Cut, MethodName};
 use crate::simulate::{Run, Verdict, run};
@@ -94,12 +92,15 @@ fn by_sum(bench: &Bench<'_>) -> Chosen {
     };
     let refused = tried.refused;
     match found {
-        Some((cut, reasons)) => Chosen {
-            choice: Choice::Proposed(cut.layout.method),
-            cut,
-            reasons,
-            refused,
-        },
+        Some((cut, mut reasons)) => {
+            reasons.extend(cut.side_reason(bench));
+            Chosen {
+                choice: Choice::Proposed(cut.layout.method),
+                cut,
+                reasons,
+                refused,
+            }
+        }
         None => Chosen {
             choice: Choice::Refuse,
             cut: plain,
@@ -174,16 +175,10 @@ impl Tried<'_> {
             straight::ratios(bench, cut)?;
             cut.side_refusal().map_or(Ok(()), Err)
         };
-        let back = wedged::back(bench, plain);
-        let lifts = length_keeps(back.lift, bench.table.wedge_lift_max.value());
-        if bench.tree.forward >= 0.0 && lifts && back.room {
+        if let Some(reasons) = wedged::set_in_straight(bench, plain) {
             self.refused.clear();
             let cut = named(plain, MethodName::StraightBackCut);
-            let judged = sound(&cut).and_then(|()| {
-                let mut reasons = wedged::judge(bench, &cut)?;
-                reasons.push("the weight still stands over the front half of the stump: a straight back cut with a wedge set is enough".to_owned());
-                Ok((cut, reasons))
-            });
+            let judged = sound(&cut).map(|()| (cut, reasons));
             let found = self.take(MethodName::StraightBackCut, judged);
             if found.is_some() {
                 return found;

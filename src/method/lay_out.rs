@@ -9,7 +9,7 @@ use crate::plan::step::{Cut, Edge, MethodName, Step, StepAct, Task, Timing};
 use crate::units::{Duration, Length};
 
 /// How much wood stays in front of a wedge beyond what would let the tree commit.
-const BEFORE_COMMIT: f64 = 0.02;
+const BEFORE_COMMIT: f64 = 0.005;
 
 /// The steps of a method for one tree.
 pub(super) fn steps(bench: &Bench<'_>, cut: &Assessed) -> Vec<Step> {

@@ -2,7 +2,7 @@
 //! released on purpose. It is proposed only where the nose has room.
 
 use crate::figures::PLUNGE_CLEAR;
-use crate::figures::Release;
+use crate::figures::{Layout, Release};
 use crate::method::bench::{Assessed, Bench};
 use crate::method::words::{cm, ratio, ratio_reaches};
 use crate::plan::step::MethodName;
@@ -27,35 +27,42 @@ pub(super) fn find(bench: &Bench<'_>) -> Result<(Assessed, Vec<String>), String>
     let nose = bench
         .nose()
         .ok_or("the saw is missing, and the nose must fit between hinge and strap")?;
-    let mut closest: Option<(Assessed, f64)> = None;
+    let mut closest: Option<Assessed> = None;
+    let mut widest = f64::NEG_INFINITY;
     for wanted in [bench.table.side_ratio_wanted, 1.0] {
         for (hinge, face) in candidates(bench, wanted) {
-            let cut = bench.assess(bench.layout(
-                MethodName::PlungeWithStrap,
-                (face, hinge),
-                Release::Strap,
-            ));
-            let room = room(bench, &cut, nose);
+            let depths = (face, hinge);
+            let layout = bench.layout(MethodName::PlungeWithStrap, depths, Release::Strap);
+            let room = room(bench, &layout, nose);
+            widest = widest.max(room);
+            if !fits(bench, room) {
+                continue;
+            }
+            let cut = bench.assess(layout);
             let splits = !ratio_reaches(cut.worst.split_ratio, 1.0);
             let steers = cut
                 .worst
                 .side_ratio
                 .is_none_or(|ratio| ratio_reaches(ratio, wanted));
-            if !splits && steers && fits(bench, room) {
+            if !splits && steers {
                 return Ok((cut, reasons(bench, &cut, room)));
             }
-            closest.get_or_insert((cut, room));
+            closest.get_or_insert(cut);
         }
     }
-    let (cut, room) = closest.ok_or("no hinge and face could be tried")?;
+    let Some(cut) = closest else {
+        return Err(format!(
+            "the nose has no room between hinge and strap: {} at most, and {} are wanted",
+            cm(widest),
+            cm(bench.table.plunge_room_min.value())
+        ));
+    };
     Err(cut.side_refusal().unwrap_or_else(|| {
         format!(
-            "no hinge from {:.0} to {:.0} % and face from a sixth to a third both holds off splitting after release (worst {} at the first tried) and leaves {} for the nose ({} there)",
+            "no hinge from {:.0} to {:.0} % and face from a sixth to a third that leave room for the nose hold off splitting after release: {} at worst at the first tried",
             100.0 * bench.table.hinge_share,
             100.0 * bench.table.hinge_share_min,
-            ratio(cut.worst.split_ratio),
-            cm(bench.table.plunge_room_min.value()),
-            cm(room)
+            ratio(cut.worst.split_ratio)
         )
     }))
 }
@@ -71,13 +78,13 @@ pub(super) fn by_hand(bench: &Bench<'_>) -> Assessed {
 }
 
 /// Room beside nose, hinge, strap and the inch between plunge and hinge.
-fn room(bench: &Bench<'_>, cut: &Assessed, nose: f64) -> f64 {
+fn room(bench: &Bench<'_>, layout: &Layout, nose: f64) -> f64 {
     bench.diameter()
-        - cut.layout.face_depth.value()
-        - cut.layout.hinge.value()
+        - layout.face_depth.value()
+        - layout.hinge.value()
         - PLUNGE_CLEAR.value()
         - nose
-        - cut.layout.strap.value()
+        - layout.strap.value()
 }
 
 fn fits(bench: &Bench<'_>, room: f64) -> bool {

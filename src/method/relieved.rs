@@ -3,9 +3,8 @@
 
 use crate::figures::{Release, cautious_extras};
 use crate::mechanics::holding::{Demand, FIRST_MOVEMENT};
-use crate::method::bench::{Assessed, Bench};
+use crate::method::bench::{Assessed, Bench, stump_of_model};
 use crate::method::lay_out::steps;
-use crate::method::size_up::stump_of_model;
 use crate::method::words::{cm, ratio, ratio_reaches};
 use crate::plan::step::{Cut, MethodName, StepAct};
 use crate::simulate::run;

@@ -1,15 +1,14 @@
 //! One tree sized up: figures, choice, cuts, steps, and the virtual stump's word on them.
 
 use crate::figures::{CannotSay, CaseState, Layout, Model, TreeFigures, TreeInput, figures};
-use crate::mechanics::holding::Demand;
-use crate::method::bench::Bench;
+use crate::method::bench::{Bench, stump_of_model};
 use crate::method::choose::{Choice, Refusal, choose, disagreement};
 use crate::method::judgement::{Judgement, STANDARD};
 use crate::method::lay_out::steps;
 use crate::method::wind_limit::wind_limit;
 use crate::plan::step::{MethodName, Step};
 use crate::simulate::{Run, Stump, run};
-use crate::units::{Force, Length, Moment, Speed};
+use crate::units::Speed;
 
 /// The answer for one tree.
 #[derive(Debug, Clone, PartialEq)]
@@ -157,19 +156,4 @@ fn approvals(
 /// Every reason why the tree's figures cannot be said.
 pub fn stump_of(input: &TreeInput) -> Result<Stump, Vec<CannotSay>> {
     Model::new(input).map(|model| stump_of_model(input, &model, &STANDARD))
-}
-
-pub(super) fn stump_of_model(input: &TreeInput, model: &Model, table: &Judgement) -> Stump {
-    let tree = model.central();
-    let nose = input.saw.map_or(Length::ZERO, |saw| saw.nose);
-    Stump {
-        stem: model.stem.clone(),
-        wood: model.wood,
-        demand: Demand {
-            weight: Force::si(tree.weight()),
-            forward: Length::si(tree.forward),
-            extra: Moment::ZERO,
-        },
-        wedge_room: nose + table.wedge_room,
-    }
 }

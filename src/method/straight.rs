@@ -67,10 +67,10 @@ pub(super) fn ratios(bench: &Bench<'_>, cut: &Assessed) -> Result<(), String> {
         ));
     }
     let least = bench.table.central_ratio_min;
-    if !ratio_reaches(cut.best.split_ratio, least) {
+    if !ratio_reaches(cut.best.margin, least) {
         return Err(format!(
-            "the stem splits at {} times what the tree asks at commit: less than {}",
-            ratio(cut.best.split_ratio),
+            "the stem splits at {} times what the tree asks from commit on: less than {}",
+            ratio(cut.best.margin),
             ratio(least)
         ));
     }

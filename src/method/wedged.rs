@@ -8,24 +8,26 @@ use crate::method::words::{cm, length_keeps};
 use crate::units::Length;
 
 /// How the weight stands to the hinge of a tree that sits back.
-pub(super) struct Back {
-    /// The lift at the demand's back end with the hinge's own moment.
-    pub lift: f64,
+struct Back {
+    /// The lift at the demand's back end.
+    lift: f64,
+    /// The same with the hinge's own moment to be overcome.
+    lift_with_hinge: f64,
     /// How far the top leans back of its foot; negative where it leans forward.
-    pub lean: f64,
+    lean: f64,
     /// The back lean the published table allows; none where it has no line.
-    pub allowed: Option<f64>,
+    allowed: Option<f64>,
     /// Whether a wedge fits behind the bar.
-    pub room: bool,
+    room: bool,
 }
 
 /// How the weight stands.
-pub(super) fn back(bench: &Bench<'_>, cut: &Assessed) -> Back {
+fn back(bench: &Bench<'_>, cut: &Assessed) -> Back {
     let (_, down) = cautious_extras(bench.model, cut.centroid);
     let weight = bench.tree.weight();
-    let behind = cut.centroid - bench.tree.forward + (cut.hold - down) / weight;
-    let face = cut.layout.face_depth.value();
-    let lift = (bench.diameter() - face) * behind / bench.tree.height;
+    let behind = cut.centroid - bench.tree.forward - down / weight;
+    let arm = bench.diameter() - cut.layout.face_depth.value();
+    let lift = arm * behind / bench.tree.height;
     let height = bench.input.height.map_or(0.0, Length::value);
     let across = bench
         .input
@@ -33,6 +35,7 @@ pub(super) fn back(bench: &Bench<'_>, cut: &Assessed) -> Back {
         .map_or_else(|| bench.model.stem.along(), |dbh| dbh.value);
     Back {
         lift,
+        lift_with_hinge: lift + arm * cut.hold / weight / bench.tree.height,
         lean: -bench.tree.forward / bench.tree.height * height,
         allowed: bench
             .input
@@ -52,6 +55,20 @@ pub(super) fn wedge_fits(bench: &Bench<'_>, cut: &Assessed) -> bool {
         .is_some_and(|nose| length_keeps(nose + bench.table.wedge_room.value(), open))
 }
 
+/// Why a straight back cut with a wedge set is enough; `None` where it is not.
+pub(super) fn set_in_straight(bench: &Bench<'_>, cut: &Assessed) -> Option<Vec<String>> {
+    let back = back(bench, cut);
+    let most = bench.table.wedge_lift_max.value();
+    let enough = bench.tree.forward >= 0.0 && back.room && length_keeps(back.lift, most);
+    enough.then(|| {
+        vec![format!(
+            "the weight stands over the stump but {} behind the hinge: a wedge set in the back cut lifts it {} at most",
+            cm(cut.centroid - bench.tree.forward),
+            cm(back.lift)
+        )]
+    })
+}
+
 /// Why the tree can be lifted over its hinge; or why not.
 pub(super) fn judge(bench: &Bench<'_>, cut: &Assessed) -> Result<Vec<String>, String> {
     let back = back(bench, cut);
@@ -62,10 +79,10 @@ pub(super) fn judge(bench: &Bench<'_>, cut: &Assessed) -> Result<Vec<String>, St
             cm(bench.table.wedge_room.value())
         ));
     }
-    if !length_keeps(back.lift, most) {
+    if !length_keeps(back.lift_with_hinge, most) {
         return Err(format!(
             "wedges would have to lift {} with the hinge's own stiffness at the demand's back end: more than {}",
-            cm(back.lift),
+            cm(back.lift_with_hinge),
             cm(most)
         ));
     }
@@ -83,6 +100,6 @@ pub(super) fn judge(bench: &Bench<'_>, cut: &Assessed) -> Result<Vec<String>, St
     Ok(vec![format!(
         "the weight stands {} behind the hinge; a wedge lifts it over with {} at most",
         cm(cut.centroid - bench.tree.forward),
-        cm(back.lift)
+        cm(back.lift_with_hinge)
     )])
 }

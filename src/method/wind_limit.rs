@@ -10,7 +10,7 @@ use crate::units::Speed;
 /// The wind past which nothing is looked for. Source: Beaufort 8 begins at 17 m/s (opened).
 const STORM: f64 = 17.0;
 
-/// The lowest wind, to a tenth of a metre a second, at which another choice would be made.
+/// The lowest wind, to a quarter of a metre a second, at which another choice would be made.
 pub(super) fn wind_limit(input: &TreeInput, table: &Judgement, choice: Choice) -> Option<Speed> {
     if choice == Choice::Refuse || input.overrides.method.is_some() {
         return None;
@@ -27,7 +27,7 @@ pub(super) fn wind_limit(input: &TreeInput, table: &Judgement, choice: Choice) -
     if keeps >= changed || !changes(changed) {
         return None;
     }
-    while changed - keeps > 0.1 {
+    while changed - keeps > 0.25 {
         let middle = 0.5 * (keeps + changed);
         if changes(middle) {
             changed = middle;

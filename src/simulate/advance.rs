@@ -1,7 +1,7 @@
 //! How far a cut has come and what it has taken from the standing wood. It judges nothing.
 
-use crate::simulate::run::Stump;
 use crate::simulate::standing::{Relief, Standing};
+use crate::simulate::stump::Stump;
 
 /// Where a cut goes, resolved on this stump.
 #[derive(Debug, Clone, Copy)]

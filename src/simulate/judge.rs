@@ -5,14 +5,17 @@ use crate::mechanics::holding::Load;
 use crate::mechanics::section::{Section, Stem};
 use crate::mechanics::splitting::{Slabs, Strength, split_mixed};
 use crate::mechanics::strap::Parts;
-use crate::simulate::run::Stump;
 use crate::simulate::standing::Standing;
+use crate::simulate::stump::Stump;
 use crate::units::{Length, Stress};
 
 /// The compression ahead of a level face cut, made before the sloping one, at which the bar is
 /// taken to be pinched. Source: our judgement; it is the lean of about nine degrees of a tree of
 /// half a metre.
 pub const PINCH_STRESS: Stress = Stress::si(2.0e6);
+
+/// By so much a cut may pass the place of a wedge that is set next.
+const MILLIMETRE: f64 = 0.001;
 
 /// What becomes of the tree at one state.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord)]
@@ -56,7 +59,7 @@ pub(super) enum Cutting {
     FloorFirst,
     /// A cut that opens or goes on opening the rear.
     Rear,
-    /// The last centimetre of such a cut.
+    /// The end of such a cut, with no wedge or line to come before the next.
     RearEnd,
     /// Anything else.
     Other,
@@ -123,8 +126,8 @@ pub(super) fn judge(stump: &Stump, standing: &Standing, doing: (Cutting, Prop)) 
     }
 }
 
-/// Whether a tree that leans back would close the cut: from the depth at which a wedge fits
-/// behind the bar, or at the cut's end, with neither wedge nor line.
+/// Whether a tree that leans back would close the cut: past the depth at which a wedge fits
+/// behind the bar, or at the cut's end, with neither wedge nor line set or coming next.
 fn sits_back(stump: &Stump, standing: &Standing, doing: (Cutting, Prop)) -> bool {
     let (cutting, prop) = doing;
     let rear = -stump.stem.ellipse().a;
@@ -134,7 +137,7 @@ fn sits_back(stump: &Stump, standing: &Standing, doing: (Cutting, Prop)) -> bool
         .map_or(0.0, |piece| (piece.0 - rear).max(0.0));
     prop == Prop::Nothing
         && match cutting {
-            Cutting::Rear => depth >= stump.wedge_room.value(),
+            Cutting::Rear => depth > stump.wedge_room.value() + MILLIMETRE,
             Cutting::RearEnd => depth > 0.0,
             Cutting::FloorFirst | Cutting::Other => false,
         }

@@ -6,7 +6,9 @@ mod advance;
 mod judge;
 mod run;
 mod standing;
+mod stump;
 
 pub use judge::{PINCH_STRESS, Verdict};
-pub use run::{Run, SimulateError, State, Stump, run};
+pub use run::{Run, SimulateError, State, run};
 pub use standing::StandingPiece;
+pub use stump::Stump;

@@ -3,32 +3,20 @@
 
 use thiserror::Error;
 
-use crate::mechanics::holding::{Demand, FacedStem, Wood};
-use crate::mechanics::section::{Section, Stem};
+use crate::mechanics::holding::FacedStem;
+use crate::mechanics::section::Section;
 use crate::mechanics::splitting::{Crossing, crossing};
 use crate::plan::step::{Cut, Edge, Step, StepAct, Task};
 use crate::simulate::advance::{Advance, advance_by, length_of};
 use crate::simulate::judge::{Cutting, Judged, Prop, Verdict, judge};
 use crate::simulate::standing::{Standing, StandingPiece};
+use crate::simulate::stump::Stump;
 use crate::units::{Area, Length, Moment};
 
 /// How far apart the states inside a progressive cut are.
 const CENTIMETRE: f64 = 0.01;
 /// The most states kept of one cut: past it, the cut is no stem's.
 const STATES_MAX: u32 = 2_000;
-
-/// The stump before the first cut, and what the tree asks of it.
-#[derive(Debug, Clone, PartialEq)]
-pub struct Stump {
-    /// The stem.
-    pub stem: Stem,
-    /// Its wood.
-    pub wood: Wood,
-    /// What the tree asks.
-    pub demand: Demand,
-    /// The depth of back cut from which a wedge can be set behind the bar.
-    pub wedge_room: Length,
-}
 
 /// Why a sequence cannot be run.
 #[derive(Debug, Clone, Copy, PartialEq, Error)]
@@ -141,12 +129,16 @@ pub fn run(stump: &Stump, steps: &[Step]) -> Result<Run, SimulateError> {
         apex: None,
         sloped: false,
         prop: Prop::Nothing,
+        propped_next: false,
         past: Verdict::Holds,
         states: Vec::new(),
     };
     for (index, step) in steps.iter().enumerate() {
         match &step.act {
-            StepAct::Cut(cut) => walk.cut(index + 1, cut)?,
+            StepAct::Cut(cut) => {
+                walk.propped_next = propped_next(&steps[index + 1..]);
+                walk.cut(index + 1, cut)?;
+            }
             StepAct::Do(Task::Wedge | Task::LineTension) => walk.prop = Prop::WedgeOrLine,
             StepAct::Do(Task::Clear | Task::Retreat)
             | StepAct::Check { .. }
@@ -181,8 +173,18 @@ struct Walk<'a> {
     apex: Option<f64>,
     sloped: bool,
     prop: Prop,
+    /// Whether a wedge or a line comes before the next cut.
+    propped_next: bool,
     past: Verdict,
     states: Vec<State>,
+}
+
+/// Whether a wedge is set or a line tensioned before the next cut.
+fn propped_next(steps: &[Step]) -> bool {
+    steps
+        .iter()
+        .take_while(|step| !matches!(step.act, StepAct::Cut(_)))
+        .any(|step| matches!(step.act, StepAct::Do(Task::Wedge | Task::LineTension)))
 }
 
 impl Walk<'_> {
@@ -210,7 +212,7 @@ impl Walk<'_> {
             } else {
                 CENTIMETRE * f64::from(index)
             };
-            let now = if last && cutting == Cutting::Rear {
+            let now = if last && cutting == Cutting::Rear && !self.propped_next {
                 Cutting::RearEnd
             } else {
                 cutting

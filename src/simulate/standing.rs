@@ -288,3 +288,36 @@ fn bounded(oval: &Oval, stretch: &Stretch) -> Sums {
         yy: over(&|_, low, high| (high * high * high - low * low * low) / 3.0),
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn quadrature_agrees_with_the_closed_forms() {
+        let stem = Stem::new(Length::m(0.55), Length::m(0.48)).unwrap();
+        let outline = stem.ellipse();
+        for (from, to) in [(-0.275, 0.275), (-0.275, -0.2), (0.05, 0.14), (-0.01, 0.0)] {
+            let stretch = Stretch {
+                from,
+                to,
+                left: -1.0,
+                right: 1.0,
+            };
+            let found = bounded(&Oval::outline(outline), &stretch);
+            let closed = stem.shape().strip(from, to);
+            for (one, other) in [
+                (found.area, closed.area),
+                (found.x, closed.x),
+                (found.xx, closed.xx),
+                (found.yy, closed.yy),
+            ] {
+                let scale = other.abs().max(1.0e-9);
+                assert!(
+                    (one - other).abs() < 1.0e-8 * scale,
+                    "{from} {to}: {one} {other}"
+                );
+            }
+        }
+    }
+}

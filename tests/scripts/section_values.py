@@ -46,3 +46,12 @@ for start, end in [(0.05, 0.14), (-0.275, 0.0), (-0.275, 0.275)]:
     a, x, y, xx, yy = sums(wood.intersection(box(start, -1, end, 1)))
     print(f"    ({start}, {end}, [{a:.10e}, {x / a:.10e}, {y / a:.10e}, "
           f"{xx - x * x / a:.10e}, {yy - y * y / a:.10e}]),")
+
+# The relieved stump of tests/integration/virtual_stump.rs: face 0.06 m, left corner 0.07 m wide
+# up to 0.03 m behind the apex, right corner 0.08 m wide up to 0.05 m behind it.
+wood = oval(0, 0, 0.13, 0.12).difference(oval(-0.02, 0.03, 0.025, 0.025))
+wood = wood.intersection(box(-1, -1, 0.07, 1))
+wood = wood.difference(box(-1, -1, 0.04, -0.12 + 0.07))
+wood = wood.difference(box(-1, 0.12 - 0.08, 0.02, 1))
+a, x, y, xx, yy = sums(wood)
+print(f"{a:.10e}, {x / a:.10e}, {y / a:.10e}, {xx - x * x / a:.10e}, {yy - y * y / a:.10e}")

@@ -1,6 +1,10 @@
 //! Getting away, lines, blocks, wedges and the ring. Source: Tobler 1993 (opened); Arboriculture
 //! Australia, tree rescue manual p. 122 (opened); Kimbell 1981 (abstract opened); OSHA logging
 //! advisor, wedge table (opened); a woodland magazine's segment rule (opened).
+#![expect(
+    clippy::approx_constant,
+    reason = "printed figures that happen to look like known constants"
+)]
 
 use super::near;
 use stumpside::mechanics::escape::{WayState, escape_time, rise_along, walking_speed};

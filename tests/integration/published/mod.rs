@@ -1,9 +1,14 @@
 //! Published and worked figures, one file a source. Nothing here is tuned to the code.
+#![expect(
+    clippy::unwrap_used,
+    reason = "helpers of tests stand outside the test functions"
+)]
 
 mod biomass;
 mod escape_and_rigging;
 mod fall;
 mod green_weight;
+mod race;
 mod section;
 mod species_table;
 mod split_derived;

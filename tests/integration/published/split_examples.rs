@@ -6,9 +6,9 @@ use stumpside::mechanics::holding::{
     Demand, FIRST_MOVEMENT, FacedStem, Wood, hold_moment, ligament_section, meets_at,
 };
 use stumpside::mechanics::section::{Section, Stem};
-use stumpside::mechanics::splitting::{Slabs, crossing, fracture_energy};
+use stumpside::mechanics::splitting::{Slabs, crossing, fracture_energy, pure_bending_split};
 use stumpside::mechanics::strap::{Slotted, failing_thickness, held};
-use stumpside::units::{Density, Force, Length, Moment, Stress};
+use stumpside::units::{Density, Force, FractureEnergy, Length, Moment, SecondMoment, Stress};
 
 fn wood(mor: f64, moe: f64, gravity_12: f64) -> Wood {
     let g1c = fracture_energy(Density::si(1120.0 * gravity_12));
@@ -329,4 +329,35 @@ fn black_locust_is_amber_with_a_hinge_of_a_tenth() {
         0.9521,
         1e-4,
     );
+}
+
+#[test]
+fn example_6_the_notched_beam_under_bending_alone() {
+    // A rectangle of 0.1 by 0.3 m notched to half, E 11 GPa, G 300 J/m²: 4,605.8968 N·m.
+    let (width, depth, share, moe, energy) = (0.1, 0.3, 0.5, 11.0e9, 300.0);
+    let inertia = |height: f64| SecondMoment::si(width * height * height * height / 12.0);
+    let ours = pure_bending_split(
+        Length::m(width),
+        (inertia(share * depth), inertia(depth)),
+        Stress::si(moe),
+        FractureEnergy::si(energy),
+    )
+    .unwrap();
+    near(ours.value(), 4_605.896_8, 1e-4);
+    // Gustafsson's formula (from memory) with the load ten thousand depths away: 4,605.68.
+    let (shear, beta): (f64, f64) = (moe / 16.0, 1.0e4);
+    let by_shear = (0.6 * (share - share * share) / shear).sqrt();
+    let by_bending = beta * (6.0 * (1.0 / share - share * share) / moe).sqrt();
+    let force = width * share * depth * (energy / depth).sqrt() / (by_shear + by_bending);
+    near(force * beta * depth, 4_605.68, 1e-2);
+    within(force * beta * depth, ours.value(), 1e-4);
+    // A part that is the whole: no crack can run.
+    let whole = inertia(depth);
+    let none = pure_bending_split(
+        Length::m(width),
+        (whole, whole),
+        Stress::si(moe),
+        FractureEnergy::si(energy),
+    );
+    assert_eq!(none, None);
 }

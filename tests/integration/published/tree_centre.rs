@@ -128,6 +128,11 @@ fn cutting_rates_from_displacement() {
             near(cutting_rate(power, wood).value() * 1.0e4, rate, 1.01);
         }
     }
+    // Powers from the test reports: within twice the fit's own 0.24 kW.
+    for (cc, kilowatts) in [(31.8, 1.4), (42.0, 2.0), (70.0, 4.1), (91.0, 5.4)] {
+        let fitted = power(SweptVolume::si(cc * 1.0e-6)).value() / 1000.0;
+        assert!((fitted - kilowatts).abs() < 2.0 * 0.24, "{cc}: {fitted}");
+    }
     // A log of 30 by 32 cm in 19.5 s.
     let log = Area::si(std::f64::consts::PI * 0.30 * 0.32 / 4.0);
     within(log.value() * 1.0e4 / 19.5, 38.7, 1e-3);
