@@ -25,6 +25,8 @@ struct Line {
 enum Command {
     /// Finds everything wrong with a plan, in one run.
     Check(command::check::CheckArgs),
+    /// Says what a finding's code means and what it rests on.
+    Why(command::why::WhyArgs),
     /// Opens the terminal program on a job; goes on where its record ends.
     Brief(command::brief::BriefArgs),
     /// Copies a demo job into a folder of its own and opens it.
@@ -47,6 +49,7 @@ pub fn run() -> ExitCode {
 fn dispatch(line: &Line, output: &mut Output<'_>) -> Exit {
     match &line.command {
         Command::Check(args) => command::check::run(args, output),
+        Command::Why(args) => command::why::run(args, output),
         Command::Brief(args) => {
             command::brief::run(args, &environment::Environment::look_around(), output)
         }

@@ -6,3 +6,4 @@ pub mod crew;
 pub mod brief;
 pub mod check;
 pub mod demo;
+pub mod why;
