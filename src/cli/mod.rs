@@ -29,6 +29,8 @@ enum Command {
     Sizeup(command::sizeup::SizeupArgs),
     /// A tree's steps on the virtual stump, judged centimetre by centimetre.
     Simulate(command::simulate::SimulateArgs),
+    /// Says what a finding's code means and what it rests on.
+    Why(command::why::WhyArgs),
     /// Opens the terminal program on a job; goes on where its record ends.
     Brief(command::brief::BriefArgs),
     /// Copies a demo job into a folder of its own and opens it.
@@ -53,6 +55,7 @@ fn dispatch(line: &Line, output: &mut Output<'_>) -> Exit {
         Command::Check(args) => command::check::run(args, output),
         Command::Sizeup(args) => command::sizeup::run(args, output),
         Command::Simulate(args) => command::simulate::run(args, output),
+        Command::Why(args) => command::why::run(args, output),
         Command::Brief(args) => {
             command::brief::run(args, &environment::Environment::look_around(), output)
         }

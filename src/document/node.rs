@@ -25,6 +25,8 @@ pub enum NodeKind {
     List(Vec<Node>),
     /// A mapping in the order written; keys are unique.
     Map(Vec<Entry>),
+    /// Something the format refuses; its finding is made already, so nobody makes another.
+    Refused,
 }
 
 /// A key with its value.
@@ -46,6 +48,7 @@ impl Node {
             NodeKind::Scalar { .. } => "a single value",
             NodeKind::List(_) => "a list",
             NodeKind::Map(_) => "a group of keys",
+            NodeKind::Refused => "something refused",
         }
     }
 

@@ -10,6 +10,8 @@ use crate::diagnostic::{Finding, Place};
 pub const LIMIT_BYTES: usize = 4 * 1024 * 1024;
 const LIMIT_LEVELS: usize = 64;
 const LIMIT_NODES: usize = 1_000_000;
+/// The key YAML 1.1 merged groups with.
+pub const MERGE: &str = "<<";
 
 /// What was read: a root where the text has one, and every refusal.
 #[derive(Debug, Clone, PartialEq, Eq)]
@@ -25,21 +27,7 @@ pub struct Document {
 /// error ends the reading at its place.
 pub fn read(text: &str) -> Document {
     if text.len() > LIMIT_BYTES {
-        let place = Place::new(0, 0);
-        let message = format!(
-            "the text has {} bytes; at most {LIMIT_BYTES} are read",
-            text.len()
-        );
-        let finding = refuse(
-            "TEXT-09",
-            place,
-            message,
-            "split the job into several plans",
-        );
-        return Document {
-            root: None,
-            findings: vec![finding],
-        };
+        return Document::refused(too_long());
     }
     let mut walk = Walk::new(text);
     walk.findings.extend(hidden_characters(text));
@@ -74,6 +62,52 @@ pub fn read(text: &str) -> Document {
         }
     }
     walk.finish()
+}
+
+/// Bytes that are no text a plan could be in.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub struct NoText {
+    /// As much as can be shown with the finding.
+    pub shown: String,
+    /// What is wrong.
+    pub finding: Finding,
+}
+
+/// The text of a file's bytes.
+///
+/// # Errors
+/// [`NoText`] for bytes that are past the limit or are no UTF-8 text.
+pub fn text_of(bytes: &[u8]) -> Result<String, Box<NoText>> {
+    if bytes.len() > LIMIT_BYTES {
+        return Err(Box::new(NoText {
+            shown: String::new(),
+            finding: too_long(),
+        }));
+    }
+    String::from_utf8(bytes.to_vec()).map_err(|error| {
+        let from = error.utf8_error().valid_up_to();
+        let shown = String::from_utf8_lossy(bytes).into_owned();
+        let place = Place::new(from, from + '\u{fffd}'.len_utf8());
+        let message = "the bytes from here on are not UTF-8 text".to_owned();
+        let help = "save the file again as UTF-8; if it is no text at all, it is the wrong file";
+        let finding = refuse("TEXT-01", place, message, help);
+        Box::new(NoText { shown, finding })
+    })
+}
+
+fn too_long() -> Finding {
+    let message = format!("the file is longer than the {LIMIT_BYTES} bytes that are read");
+    let help = "split the job into several plans";
+    refuse("TEXT-09", Place::new(0, 0), message, help)
+}
+
+impl Document {
+    fn refused(finding: Finding) -> Self {
+        Self {
+            root: None,
+            findings: vec![finding],
+        }
+    }
 }
 
 struct Walk<'a> {
@@ -127,13 +161,26 @@ impl<'a> Walk<'a> {
             .byte_offset()
             .unwrap_or(0)
             .min(self.text.len());
+        self.root = None;
+        self.open.clear();
+        if self.hidden_before(byte) {
+            // The hidden character on this line is what the parser stumbled over.
+            return;
+        }
         let message = format!("this is not readable as YAML: {}", error.info());
         let help = "look at this line and the one above: indentation by spaces, `key: value`, \
                     brackets closed, text with `: ` or `#` in quotes";
         self.findings
             .push(refuse("TEXT-03", Place::new(byte, byte + 1), message, help));
-        self.root = None;
-        self.open.clear();
+    }
+
+    /// Whether a hidden character was found on the line of a byte, up to just past it.
+    fn hidden_before(&self, byte: usize) -> bool {
+        let line = self.text.get(..byte).unwrap_or("");
+        let start = line.rfind('\n').map_or(0, |at| at + 1);
+        self.findings.iter().any(|finding| {
+            finding.code == "TEXT-02" && (start..=byte + 1).contains(&finding.place.start)
+        })
     }
 
     fn take(&mut self, event: Event<'_>, span: Span) {
@@ -141,17 +188,17 @@ impl<'a> Walk<'a> {
         match event {
             Event::DocumentStart(_, version) => self.document_start(version.is_some(), place),
             Event::Scalar(text, style, _, tag) => {
-                if tag.is_some() {
-                    self.tag(place);
-                }
                 let plain = style == ScalarStyle::Plain;
-                self.node(Node {
-                    place,
-                    kind: NodeKind::Scalar {
+                let kind = if tag.is_some() {
+                    self.tag(place);
+                    NodeKind::Refused
+                } else {
+                    NodeKind::Scalar {
                         text: text.into_owned(),
                         plain,
-                    },
-                });
+                    }
+                };
+                self.node(Node { place, kind });
             }
             Event::SequenceStart(_, _, tag) => {
                 if tag.is_some() {
@@ -215,16 +262,23 @@ impl<'a> Walk<'a> {
     }
 
     fn alias(&mut self, place: Place) {
+        let refused = Node {
+            place,
+            kind: NodeKind::Refused,
+        };
+        if let Some(Open::Map {
+            key: Some((name, _)),
+            ..
+        }) = self.open.last()
+            && name == MERGE
+        {
+            // The merge key's own finding says it all.
+            return self.node(refused);
+        }
         let message = "aliases (`*name`) are not used in plans".to_owned();
         let help = "write the values out where they belong, so that each has its own place";
         self.findings.push(refuse("TEXT-05", place, message, help));
-        self.node(Node {
-            place,
-            kind: NodeKind::Scalar {
-                text: String::new(),
-                plain: true,
-            },
-        });
+        self.node(refused);
     }
 
     fn start(&mut self, open: Open) {
@@ -276,7 +330,9 @@ impl<'a> Walk<'a> {
                 Some((name, key_place)) => {
                     if let Some(finding) = refused_key(&name, key_place, entries) {
                         self.findings.push(finding);
-                    } else {
+                    }
+                    // A merge key stays, so that whoever reads the group knows it is not whole.
+                    if !entries.iter().any(|e| e.key == name) {
                         entries.push(Entry {
                             key: name,
                             key_place,
@@ -306,13 +362,13 @@ impl<'a> Walk<'a> {
 fn key_of(node: &Node) -> (String, Place) {
     match &node.kind {
         NodeKind::Scalar { text, .. } => (text.clone(), node.place),
-        NodeKind::List(_) | NodeKind::Map(_) => (String::new(), node.place),
+        NodeKind::List(_) | NodeKind::Map(_) | NodeKind::Refused => (String::new(), node.place),
     }
 }
 
 /// A duplicate or merge key is refused; the first value stands.
 fn refused_key(name: &str, place: Place, entries: &[Entry]) -> Option<Finding> {
-    if name == "<<" {
+    if name == MERGE {
         let message = "merge keys (`<<`) are not used in plans".to_owned();
         return Some(refuse("TEXT-05", place, message, "write the keys out"));
     }

@@ -3,6 +3,7 @@
 
 mod checklist;
 mod method;
+mod rule_set;
 mod tailgate;
 
 use std::collections::BTreeMap;
@@ -12,6 +13,9 @@ use thiserror::Error;
 
 pub use checklist::{Caution, Checklist, Choice, ListItem, Measure, What, capital};
 pub use method::{CutWords, MethodWords, StepWords};
+pub use rule_set::{
+    Figure, FigureValue, Figures, KitPlace, RuleLine, RuleSet, WedgeRow, WedgeTable,
+};
 pub use tailgate::{Everyone, Question, Tailgate};
 
 /// The built-in texts, by their names below `plans/`.
@@ -43,6 +47,10 @@ pub const BUILT_IN: &[(&str, &str)] = &[
     (
         "checklists/stopped.yaml",
         include_str!("../../plans/checklists/stopped.yaml"),
+    ),
+    (
+        "rules/us-logging.yaml",
+        include_str!("../../plans/rules/us-logging.yaml"),
     ),
 ];
 
@@ -90,6 +98,8 @@ pub struct Parts {
     pub all_clear: Checklist,
     /// After a stop.
     pub stopped: Checklist,
+    /// The rule sets by name.
+    pub rule_sets: BTreeMap<String, RuleSet>,
     /// SHA-256 of each part's bytes, by name.
     pub hashes: BTreeMap<String, String>,
 }
@@ -125,6 +135,7 @@ impl Parts {
             hold_line: list(&texts, "checklists/hold-line.yaml")?,
             all_clear: list(&texts, "checklists/all-clear.yaml")?,
             stopped: list(&texts, "checklists/stopped.yaml")?,
+            rule_sets: rule_sets(&texts)?,
             hashes,
         })
     }
@@ -141,6 +152,22 @@ fn read<T: serde::de::DeserializeOwned>(
         name: name.to_owned(),
         why,
     })
+}
+
+/// Every text below `rules/`; a set's name is its file's name.
+fn rule_sets(texts: &BTreeMap<&str, &str>) -> Result<BTreeMap<String, RuleSet>, PartsError> {
+    let mut sets = BTreeMap::new();
+    for name in texts.keys().filter(|name| name.starts_with("rules/")) {
+        let set: RuleSet = read(texts, name)?;
+        if format!("rules/{}.yaml", set.set) != **name {
+            return Err(PartsError::Unreadable {
+                name: (*name).to_owned(),
+                why: format!("it calls itself `{}`", set.set),
+            });
+        }
+        sets.insert(set.set.clone(), set);
+    }
+    Ok(sets)
 }
 
 fn list(texts: &BTreeMap<&str, &str>, name: &str) -> Result<Checklist, PartsError> {

@@ -1,6 +1,7 @@
 //! The job plan: YAML nodes with places in, typed values with places out. The room owns the step
 //! and cut types; it never checks one value against another and never opens a file.
 
+mod codes;
 mod decode;
 pub mod fields;
 pub mod model;
@@ -8,6 +9,7 @@ mod nearest;
 pub mod quantity;
 pub mod step;
 
-pub use decode::{Loaded, TOP_KEYS, load};
+pub use codes::EXPLANATIONS;
+pub use decode::{Loaded, Partial, TOP_KEYS, load};
 pub use model::*;
 pub use nearest::nearest;

@@ -114,6 +114,8 @@ pub struct Location {
 /// One person.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Person {
+    /// Its route in the plan, such as `trees[2]`.
+    pub route: String,
     /// Short id, `[a-z0-9-]`.
     pub id: Spanned<String>,
     /// Full name.
@@ -244,6 +246,8 @@ pub struct Limits {
 /// A saw.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Saw {
+    /// Its route in the plan, such as `trees[2]`.
+    pub route: String,
     /// Its id.
     pub id: Spanned<String>,
     /// Bar length.
@@ -281,6 +285,8 @@ pub struct Slope {
 /// A feature of the site.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Feature {
+    /// Its route in the plan, such as `trees[2]`.
+    pub route: String,
     /// Its id.
     pub id: Spanned<String>,
     /// What it is.
@@ -357,6 +363,8 @@ impl FeatureKind {
 /// One tree.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Tree {
+    /// Its route in the plan, such as `trees[2]`.
+    pub route: String,
     /// Its id.
     pub id: Spanned<String>,
     /// Species as written.
@@ -498,6 +506,10 @@ impl TreeState {
 /// A defect of the stem.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Defect {
+    /// Its route in the plan, such as `trees[2]`.
+    pub route: String,
+    /// Where the entry stands.
+    pub place: Place,
     /// What it is, as a word of the format.
     pub kind: Spanned<DefectKind>,
     /// Where or of which form.
@@ -631,6 +643,8 @@ impl FaceKind {
 /// A way out.
 #[derive(Debug, Clone, PartialEq)]
 pub struct WayOut {
+    /// Its route in the plan, such as `trees[2]`.
+    pub route: String,
     /// Its id.
     pub id: Spanned<String>,
     /// Bearing from the stump.
@@ -659,6 +673,8 @@ pub struct Line {
 /// A hazard with its control and owner.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Hazard {
+    /// Its route in the plan, such as `trees[2]`.
+    pub route: String,
     /// Its id.
     pub id: Spanned<String>,
     /// What it is.

@@ -1,13 +1,19 @@
 //! `check`: everything wrong with a plan, in one run.
 
-use std::path::PathBuf;
+use std::collections::BTreeMap;
+use std::path::{Path, PathBuf};
 
 use clap::Args;
 use serde_json::{Value as Json, json};
 
+use crate::assessment::{self, Ground};
 use crate::cli::exit::Exit;
 use crate::cli::output::{Format, Output};
-use crate::diagnostic::{self, Finding, SourceText, count};
+use crate::diagnostic::{self, Finding, Severity, SourceText, count};
+use crate::document::{self, LIMIT_BYTES};
+use crate::parts::Parts;
+use crate::plan::{self, Loaded, Partial};
+use crate::shell::files::{self, FileError};
 use crate::shell::job_folder::{self, PlanFile};
 
 /// What `check` takes.
@@ -22,7 +28,7 @@ pub struct CheckArgs {
 
 /// Runs it: exit 1 where a finding says stop.
 pub fn run(args: &CheckArgs, output: &mut Output<'_>) -> Exit {
-    let file = match job_folder::read_plan(&args.plan) {
+    let file = match read(&args.plan) {
         Ok(file) => file,
         Err(error) => {
             output.talk(&format!("stumpside: {error}"));
@@ -45,14 +51,72 @@ pub fn run(args: &CheckArgs, output: &mut Output<'_>) -> Exit {
     }
 }
 
+/// Reads a plan. A file that can be read and is no plan, because it is too long or no text, has
+/// its one finding.
+///
+/// # Errors
+/// [`FileError`] where the file cannot be read.
+pub fn read(path: &Path) -> Result<PlanFile, FileError> {
+    // One byte past the limit is enough to say that it is past it.
+    let bytes = match files::read_limited(path, LIMIT_BYTES) {
+        Ok(bytes) => bytes,
+        Err(FileError::TooLong { .. }) => vec![0; LIMIT_BYTES + 1],
+        Err(error) => return Err(error),
+    };
+    let (text, loaded) = match document::text_of(&bytes) {
+        Ok(text) => {
+            let loaded = plan::load(&text);
+            (text, loaded)
+        }
+        Err(no_text) => (
+            no_text.shown,
+            Loaded {
+                plan: None,
+                partial: None,
+                findings: vec![no_text.finding],
+            },
+        ),
+    };
+    Ok(PlanFile {
+        path: path.to_owned(),
+        source: SourceText::new(path.display().to_string(), text),
+        loaded,
+    })
+}
+
 /// Every finding of a plan, in the order of their places.
 pub fn findings_of(file: &PlanFile) -> Vec<Finding> {
     let mut findings = file.loaded.findings.clone();
-    if let Some(plan) = &file.loaded.plan {
-        findings.extend(crate::assessment::findings(plan));
+    if let Some(partial) = &file.loaded.partial {
+        let parts = match job_folder::read_parts(&partial.plan, &file.path) {
+            Ok(parts) => parts,
+            Err(error) => {
+                findings.push(unusable_parts(partial, &error.to_string()));
+                Parts::built_in()
+            }
+        };
+        let ground = Ground {
+            parts: &parts,
+            knows_species: &|_| Ok(()),
+            size_ups: &BTreeMap::new(),
+        };
+        findings.extend(assessment::look_through(partial, &ground));
     }
     diagnostic::sort(&mut findings);
     findings
+}
+
+fn unusable_parts(partial: &Partial, why: &str) -> Finding {
+    let named = partial.plan.parts.as_ref();
+    Finding {
+        code: "JOB-33",
+        severity: Severity::Stop,
+        message: format!("the parts folder cannot be used: {why}"),
+        place: named.map_or(partial.plan.place, |n| n.place),
+        path: "parts".to_owned(),
+        rule: None,
+        help: "correct the folder, or take `parts` out of the plan; the built-in rules were looked at meanwhile".to_owned(),
+    }
 }
 
 /// Findings as talk, for commands whose answer is something else.

@@ -9,3 +9,4 @@ pub mod demo;
 pub mod simulate;
 pub mod sizeup;
 mod sizeup_text;
+pub mod why;

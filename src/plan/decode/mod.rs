@@ -6,10 +6,13 @@ mod reader;
 mod site;
 mod steps;
 mod trees;
+mod values;
 mod work;
 
+use std::collections::BTreeSet;
+
 use crate::diagnostic::{Finding, Place, Severity};
-use crate::document::{self, Node};
+use crate::document::{self, Node, NodeKind};
 use crate::plan::model::{DisplayUnits, Plan};
 use reader::Reader;
 
@@ -18,8 +21,57 @@ use reader::Reader;
 pub struct Loaded {
     /// The plan, where nothing in it stops it being understood.
     pub plan: Option<Plan>,
+    /// The plan as far as it could be read, to be looked through for more mistakes and never to
+    /// be worked from.
+    pub partial: Option<Partial>,
     /// Every finding of text and values, in no order.
     pub findings: Vec<Finding>,
+}
+
+/// A plan as far as it could be read.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Partial {
+    /// What was read; entries that could not be read whole are left out.
+    pub plan: Plan,
+    /// Routes whose value is refused already.
+    pub spoiled: Vec<String>,
+    /// Ids of the entries left out.
+    pub unread: BTreeSet<String>,
+}
+
+impl Partial {
+    /// A plan that was read whole.
+    pub const fn whole(plan: Plan) -> Self {
+        Self {
+            plan,
+            spoiled: vec![],
+            unread: BTreeSet::new(),
+        }
+    }
+
+    /// Whether something at or within a route, or around it, is refused already.
+    pub fn is_spoiled(&self, route: &str) -> bool {
+        self.spoiled
+            .iter()
+            .any(|spoiled| within(spoiled, route) || within(route, spoiled))
+    }
+
+    /// Whether a list has entries whose ids are not known, so that nobody can say which are in it.
+    pub fn is_open(&self, list: &str) -> bool {
+        self.spoiled.iter().any(|spoiled| {
+            let Some(rest) = spoiled.strip_prefix(list) else {
+                return false;
+            };
+            let after_index = rest.split_once(']').map_or(rest, |(_, after)| after);
+            after_index.is_empty() || after_index == ".id"
+        })
+    }
+}
+
+/// Whether a route is another one or leads into it.
+fn within(inner: &str, outer: &str) -> bool {
+    let rest = inner.strip_prefix(outer);
+    rest.is_some_and(|rest| rest.is_empty() || rest.starts_with(['.', '[']))
 }
 
 /// The keys at the top of a plan.
@@ -51,15 +103,24 @@ pub fn load(text: &str) -> Loaded {
     let mut findings = document.findings;
     findings.extend(reader.findings);
     let readable = findings.iter().all(|f| f.severity != Severity::Stop);
+    let partial = plan.map(|plan| Partial {
+        plan,
+        spoiled: reader.spoiled,
+        unread: reader.unread,
+    });
+    let whole = partial.as_ref().filter(|_| readable);
     Loaded {
-        plan: plan.filter(|_| readable),
+        plan: whole.map(|partial| partial.plan.clone()),
+        partial,
         findings,
     }
 }
 
 fn top(reader: &mut Reader, root: &Node, length: usize) -> Option<Plan> {
     let group = reader.group(root, "", TOP_KEYS)?;
-    version(reader, &group);
+    if !version(reader, &group) {
+        return None;
+    }
     let units = group.get("units").and_then(|node| {
         reader.word(
             node,
@@ -99,23 +160,25 @@ fn top(reader: &mut Reader, root: &Node, length: usize) -> Option<Plan> {
         stop_means: reader.text_at(&group, "stop_means"),
         parts: reader.text_at(&group, "parts"),
         signals,
-        job: job?,
-        crew: crew?,
+        job: job.unwrap_or_else(|| work::no_job(root.place)),
+        crew: crew.unwrap_or_default(),
         tolerances,
         emergency,
         limits,
         saws,
         site,
-        trees: trees?,
+        trees: trees.unwrap_or_default(),
         place: Place::new(length, length),
     })
 }
 
-fn version(reader: &mut Reader, group: &reader::Group<'_>) {
+/// Whether the rest can be read: a plan of another format has other keys.
+fn version(reader: &mut Reader, group: &reader::Group<'_>) -> bool {
     let Some(node) = reader.need(group, "plan", "1") else {
-        return;
+        return true;
     };
-    if reader::scalar(node) != "1" {
+    let known = matches!(&node.kind, NodeKind::Scalar { text, .. } if text == "1");
+    if !known {
         let message = "this is not a plan of format 1".to_owned();
         reader.stop(
             "PLAN-13",
@@ -126,6 +189,7 @@ fn version(reader: &mut Reader, group: &reader::Group<'_>) {
             ),
         );
     }
+    known
 }
 
 fn signals(

@@ -68,7 +68,9 @@ fn person(reader: &mut Reader, node: &Node, route: &str) -> Option<Person> {
         .get("cpr_until")
         .and_then(|n| reader.date(n, &group.path("cpr_until")));
     let trained = trainings(reader, &group);
+    reader.whole_or_unread(id.as_ref(), name.is_some());
     Some(Person {
+        route: route.to_owned(),
         id: id?,
         name: name?,
         roles,

@@ -1,27 +1,30 @@
-//! The small tools every decoder uses: groups of keys, texts, words, quantities. Each one turns a
-//! mistake into one finding with its place and its way out, and goes on.
+//! The small tools every decoder uses: groups of keys, lists, texts, words. Each one turns a
+//! mistake into one finding with its place and its way out, and goes on. It never guesses a value.
 
-use chrono::NaiveDate;
+use std::collections::BTreeSet;
 
 use crate::diagnostic::{Finding, Place, Severity};
-use crate::document::{Entry, Node, NodeKind};
-use crate::plan::fields::{self, DefaultSpread, Field};
-use crate::plan::model::{Measured, Spanned};
-use crate::plan::nearest::nearest;
-use crate::plan::quantity::{self, Refused};
-use crate::units::{Bearing, FromSi, Reading};
+use crate::document::{Entry, MERGE, Node, NodeKind};
+use crate::plan::model::Spanned;
+use crate::plan::nearest::{nearest, slip_of};
 
 /// Collects findings while decoding.
 #[derive(Debug, Default)]
 pub(super) struct Reader {
     /// What was found so far.
     pub(super) findings: Vec<Finding>,
+    /// Routes whose value is refused, so that nobody says anything more about them.
+    pub(super) spoiled: Vec<String>,
+    /// Ids of entries that could not be read whole.
+    pub(super) unread: BTreeSet<String>,
 }
 
 /// A group of keys with its route.
 #[derive(Debug, Clone)]
 pub(super) struct Group<'a> {
     entries: &'a [Entry],
+    /// Missing keys that an unknown key was meant for; no second finding says they are missing.
+    meant: Vec<&'static str>,
     /// The route to the group, empty at the top.
     pub(super) route: String,
     /// Where the group stands.
@@ -32,6 +35,12 @@ impl<'a> Group<'a> {
     /// The value under a key; nothing where the key is missing.
     pub(super) fn get(&self, key: &str) -> Option<&'a Node> {
         self.entries.iter().find(|e| e.key == key).map(|e| &e.value)
+    }
+
+    /// Whether a key is missing without a finding of its own having said so.
+    pub(super) fn lacks(&self, key: &str) -> bool {
+        let spoken_for = self.meant.contains(&key) || self.get(MERGE).is_some();
+        self.get(key).is_none_or(Node::is_empty) && !spoken_for
     }
 
     /// The route of a key in this group.
@@ -52,6 +61,7 @@ impl<'a> Group<'a> {
 impl Reader {
     /// Adds a stop finding.
     pub(super) fn stop(&mut self, code: &'static str, at: (Place, &str), words: (String, &str)) {
+        self.spoiled.push(at.1.to_owned());
         self.findings.push(Finding {
             code,
             severity: Severity::Stop,
@@ -63,19 +73,33 @@ impl Reader {
         });
     }
 
+    /// Keeps the id of an entry that could not be read whole, so that whoever names it is not
+    /// told that it does not exist.
+    pub(super) fn whole_or_unread(&mut self, id: Option<&Spanned<String>>, whole: bool) {
+        if let (Some(id), false) = (id, whole) {
+            self.unread.insert(id.value.clone());
+        }
+    }
+
     /// A group whose keys are known; unknown ones become findings that name the nearest.
     pub(super) fn group<'a>(
         &mut self,
         node: &'a Node,
         route: &str,
-        known: &[&str],
+        known: &[&'static str],
     ) -> Option<Group<'a>> {
-        let group = self.open_group(node, route)?;
+        let mut group = self.open_group(node, route)?;
         for entry in group.entries {
-            if known.contains(&entry.key.as_str()) {
+            if entry.key == MERGE || known.contains(&entry.key.as_str()) {
                 continue;
             }
-            let near = nearest(&entry.key, known.iter().copied());
+            let missing = known.iter().copied().filter(|k| group.get(k).is_none());
+            let meant = slip_of(&entry.key, missing);
+            let near = meant.or_else(|| nearest(&entry.key, known.iter().copied()));
+            if let Some(meant) = meant {
+                self.spoiled.push(group.path(meant));
+                group.meant.push(meant);
+            }
             let message = format!("the key `{}` is not known here", entry.key);
             let help = match near {
                 Some(near) => format!("did you mean `{near}`? Known keys: {}", known.join(", ")),
@@ -92,10 +116,11 @@ impl Reader {
         match &node.kind {
             NodeKind::Map(entries) => Some(Group {
                 entries,
+                meant: vec![],
                 route: route.to_owned(),
                 place: node.place,
             }),
-            NodeKind::Scalar { .. } | NodeKind::List(_) => {
+            NodeKind::Scalar { .. } | NodeKind::List(_) | NodeKind::Refused => {
                 self.shape(node, route, "a group of keys, such as `{key: value}`");
                 None
             }
@@ -109,8 +134,7 @@ impl Reader {
         key: &str,
         example: &str,
     ) -> Option<&'a Node> {
-        let node = group.get(key).filter(|n| !n.is_empty());
-        if node.is_none() {
+        if group.lacks(key) {
             let message = format!("`{key}` is missing");
             let place = group
                 .get(key)
@@ -123,14 +147,14 @@ impl Reader {
                 (message, &format!("add `{key}: {example}`")),
             );
         }
-        node
+        group.get(key).filter(|n| !n.is_empty())
     }
 
     /// A list.
     pub(super) fn list<'a>(&mut self, node: &'a Node, route: &str) -> &'a [Node] {
         match &node.kind {
             NodeKind::List(items) => items,
-            NodeKind::Scalar { .. } | NodeKind::Map(_) => {
+            NodeKind::Scalar { .. } | NodeKind::Map(_) | NodeKind::Refused => {
                 self.shape(node, route, "a list, such as `[one, two]`");
                 &[]
             }
@@ -146,7 +170,7 @@ impl Reader {
                     place: node.place,
                 })
             }
-            NodeKind::Scalar { .. } | NodeKind::List(_) | NodeKind::Map(_) => {
+            NodeKind::Scalar { .. } | NodeKind::List(_) | NodeKind::Map(_) | NodeKind::Refused => {
                 self.shape(node, route, "a text");
                 None
             }
@@ -197,225 +221,12 @@ impl Reader {
         None
     }
 
-    /// A quantity of the field named by `row`.
-    pub(super) fn quantity<T: FromSi>(
-        &mut self,
-        node: &Node,
-        route: &str,
-        row: &str,
-    ) -> Option<Measured<T>> {
-        let field = fields::find(row).expect("every quantity decoded has its row in the table");
-        let NodeKind::Scalar { text, .. } = &node.kind else {
-            self.shape(
-                node,
-                route,
-                &format!("a quantity with its unit ({})", field.kind.unit_words()),
-            );
-            return None;
-        };
-        match quantity::read(text, field.kind) {
-            Ok(read) => self.in_range(read, node, (route, field)),
-            Err(refused) => {
-                self.refused_quantity(&refused, node, (route, field));
-                None
-            }
+    /// A value of the wrong shape. What the text's own rules refused is passed over in silence.
+    pub(super) fn shape(&mut self, node: &Node, route: &str, wanted: &str) {
+        if node.kind == NodeKind::Refused {
+            self.spoiled.push(route.to_owned());
+            return;
         }
-    }
-
-    /// An optional quantity under a key.
-    pub(super) fn quantity_at<T: FromSi>(
-        &mut self,
-        group: &Group<'_>,
-        key: &str,
-        row: &str,
-    ) -> Option<Measured<T>> {
-        let node = group.get(key)?;
-        self.quantity(node, &group.path(key), row)
-    }
-
-    fn in_range<T: FromSi>(
-        &mut self,
-        read: quantity::Read,
-        node: &Node,
-        (route, field): (&str, &Field),
-    ) -> Option<Measured<T>> {
-        // Written so that whatever is not inside the range is refused.
-        if !(field.least <= read.value && read.value <= field.most) {
-            let (least, most) = (in_words(field.least, field), in_words(field.most, field));
-            let message = format!("this is outside what can be meant here: {least} to {most}");
-            self.stop(
-                "PLAN-07",
-                (node.place, route),
-                (message, "look at the number and at its unit"),
-            );
-            return None;
-        }
-        let spread = read.spread.unwrap_or(match field.spread {
-            DefaultSpread::Exact => 0.0,
-            DefaultSpread::Absolute(spread) => spread,
-            DefaultSpread::Share(share) => read.value.abs() * share,
-        });
-        let (value, spread_si) = (T::from_si(read.value).ok()?, T::from_si(spread).ok()?);
-        Some(Measured {
-            reading: Reading::new(value, spread_si),
-            spread_written: read.spread.is_some(),
-            place: node.place,
-            typed: scalar(node).to_owned(),
-        })
-    }
-
-    fn refused_quantity(&mut self, refused: &Refused, node: &Node, (route, field): (&str, &Field)) {
-        let units = field.kind.unit_words();
-        let first = field.kind.units().first().map_or("", |(word, _)| *word);
-        let (code, help) = match refused {
-            Refused::Empty => ("PLAN-02", format!("write a number and a unit ({units})")),
-            Refused::Comma => ("PLAN-09", "write a point: `4.5`, not `4,5`".to_owned()),
-            Refused::Bare => (
-                "PLAN-04",
-                format!(
-                    "add the unit, for example `{} {first}`; units: {units}",
-                    scalar(node).trim()
-                ),
-            ),
-            Refused::NoNumber => ("PLAN-06", format!("write a number and a unit ({units})")),
-            Refused::NotFinite => (
-                "PLAN-06",
-                format!("write a real number and a unit ({units})"),
-            ),
-            Refused::Unit(_) => ("PLAN-05", format!("units here: {units}")),
-            Refused::NegativeSpread => (
-                "PLAN-07",
-                "the number after ± is one standard deviation, 0 or more".to_owned(),
-            ),
-        };
-        self.stop(code, (node.place, route), (refused.to_string(), &help));
-    }
-
-    /// A bearing.
-    pub(super) fn bearing(&mut self, node: &Node, route: &str) -> Option<Spanned<Bearing>> {
-        let help = "write degrees clockwise from true north, `110 deg`, or a compass word, `ENE`";
-        let NodeKind::Scalar { text, .. } = &node.kind else {
-            self.shape(node, route, "a bearing");
-            return None;
-        };
-        match quantity::read_bearing(text) {
-            Ok(value) => Some(Spanned {
-                value,
-                place: node.place,
-            }),
-            Err(refused) => {
-                let code = match refused {
-                    Refused::Bare => "PLAN-04",
-                    Refused::Unit(_) => "PLAN-05",
-                    Refused::Comma => "PLAN-09",
-                    Refused::Empty
-                    | Refused::NoNumber
-                    | Refused::NotFinite
-                    | Refused::NegativeSpread => "PLAN-06",
-                };
-                let message = match refused {
-                    Refused::NoNumber => "no bearing from 0 to 360 degrees stands here".to_owned(),
-                    Refused::Empty
-                    | Refused::Comma
-                    | Refused::Bare
-                    | Refused::NotFinite
-                    | Refused::Unit(_)
-                    | Refused::NegativeSpread => refused.to_string(),
-                };
-                self.stop(code, (node.place, route), (message, help));
-                None
-            }
-        }
-    }
-
-    /// A date, `2026-11-14`.
-    pub(super) fn date(&mut self, node: &Node, route: &str) -> Option<Spanned<NaiveDate>> {
-        let text = self.text(node, route)?;
-        let ten = text.value.len() == 10;
-        match NaiveDate::parse_from_str(&text.value, "%Y-%m-%d") {
-            Ok(value) if ten => Some(Spanned {
-                value,
-                place: text.place,
-            }),
-            Ok(_) | Err(_) => {
-                let message = format!("`{}` is not a date", text.value);
-                self.stop(
-                    "PLAN-12",
-                    (text.place, route),
-                    (message, "write year-month-day: `2026-11-14`"),
-                );
-                None
-            }
-        }
-    }
-
-    /// `true` or `false`.
-    pub(super) fn truth(&mut self, node: &Node, route: &str) -> Option<Spanned<bool>> {
-        self.word(node, route, &[("true", true), ("false", false)])
-    }
-
-    /// A whole number up to a limit.
-    pub(super) fn whole(&mut self, node: &Node, route: &str, most: u32) -> Option<Spanned<u32>> {
-        let text = self.text(node, route)?;
-        match text.value.parse::<u32>() {
-            Ok(value) if value <= most => Some(Spanned {
-                value,
-                place: text.place,
-            }),
-            Ok(_) | Err(_) => {
-                let message = format!("a whole number from 0 to {most} was expected");
-                self.stop(
-                    "PLAN-06",
-                    (text.place, route),
-                    (message, "write digits only"),
-                );
-                None
-            }
-        }
-    }
-
-    /// A plain number in a range, for degrees of latitude and longitude.
-    pub(super) fn number(
-        &mut self,
-        node: &Node,
-        route: &str,
-        range: (f64, f64),
-    ) -> Option<Spanned<f64>> {
-        let text = self.text(node, route)?;
-        match text.value.parse::<f64>() {
-            Ok(value) if range.0 <= value && value <= range.1 => Some(Spanned {
-                value,
-                place: text.place,
-            }),
-            Ok(_) | Err(_) => {
-                let message = format!("a number from {} to {} was expected", range.0, range.1);
-                self.stop(
-                    "PLAN-07",
-                    (text.place, route),
-                    (message, "write decimal degrees with a point: `44.61`"),
-                );
-                None
-            }
-        }
-    }
-
-    /// An id: lower and upper case letters, digits, hyphens.
-    pub(super) fn id(&mut self, node: &Node, route: &str) -> Option<Spanned<String>> {
-        let text = self.text(node, route)?;
-        let good = |c: char| c.is_ascii_alphanumeric() || c == '-';
-        if text.value.len() <= 32 && text.value.chars().all(good) {
-            return Some(text);
-        }
-        let message = format!("`{}` cannot be used as an id", text.value);
-        self.stop(
-            "PLAN-08",
-            (text.place, route),
-            (message, "use letters, digits and hyphens, at most 32"),
-        );
-        None
-    }
-
-    fn shape(&mut self, node: &Node, route: &str, wanted: &str) {
         let message = format!("{} stands here; expected {wanted}", node.describe());
         self.stop(
             "PLAN-03",
@@ -432,17 +243,6 @@ impl Reader {
 pub(super) fn scalar(node: &Node) -> &str {
     match &node.kind {
         NodeKind::Scalar { text, .. } => text,
-        NodeKind::List(_) | NodeKind::Map(_) => "",
+        NodeKind::List(_) | NodeKind::Map(_) | NodeKind::Refused => "",
     }
-}
-
-/// An SI value in the first unit of its field, for messages.
-fn in_words(si: f64, field: &Field) -> String {
-    let (word, factor) = match field.kind.units() {
-        [_, _, metre, ..] if field.kind == quantity::Kind::Length => *metre,
-        [first, ..] => *first,
-        [] => ("", 1.0),
-    };
-    let number = (si / factor * 1000.0).round() / 1000.0;
-    format!("{number} {word}")
 }

@@ -78,12 +78,14 @@ fn feature(reader: &mut Reader, node: &Node, route: &str) -> Option<Feature> {
             along.extend(position(reader, item, &format!("{route}.along[{index}]")));
         }
     }
-    if at.is_none() && along.is_empty() && group.get("at").or(group.get("along")).is_none() {
+    if group.lacks("at") && group.lacks("along") {
         let message = "this feature has no position".to_owned();
         let help = "add `at: [120 m, -40 m]` (east, north) or `along: [[…], […]]`";
         reader.stop("PLAN-02", (group.place, route), (message, help));
     }
+    reader.whole_or_unread(id.as_ref(), kind.is_some());
     Some(Feature {
+        route: route.to_owned(),
         id: id?,
         kind: kind?,
         voltage,
@@ -116,11 +118,6 @@ pub(super) fn pair(
         let second = reader.quantity(second, &format!("{route}[1]"), row);
         return Some([first?, second?]);
     }
-    let message = format!("{} stands here; expected two lengths", node.describe());
-    reader.stop(
-        "PLAN-03",
-        (node.place, route),
-        (message, "write two lengths: `[12 m, -4 m]`"),
-    );
+    reader.shape(node, route, "two lengths, such as `[12 m, -4 m]`");
     None
 }

@@ -25,6 +25,8 @@ const KNOWN: &[&str] = &[
     "note",
 ];
 
+const KINDS: [&str; 4] = ["cut", "check", "hold", "do"];
+
 #[derive(Clone, Copy)]
 enum Word {
     FaceSlope,
@@ -66,11 +68,14 @@ pub(super) fn steps(reader: &mut Reader, node: &Node, route: &str) -> Vec<Spanne
 
 fn step(reader: &mut Reader, node: &Node, route: &str) -> Option<Step> {
     let group = reader.group(node, route, KNOWN)?;
-    let kinds: Vec<&str> = ["cut", "check", "hold", "do"]
+    let kinds: Vec<&str> = KINDS
         .into_iter()
         .filter(|k| group.get(k).is_some())
         .collect();
     let [kind] = kinds.as_slice() else {
+        if !KINDS.iter().all(|k| group.lacks(k)) && kinds.is_empty() {
+            return None;
+        }
         let message = "a step is one of `cut`, `check`, `hold` and `do`".to_owned();
         reader.stop(
             "PLAN-15",
@@ -198,6 +203,7 @@ fn edge(reader: &mut Reader, group: &Group<'_>) -> Option<Edge> {
     match (group.get("to_hinge"), group.get("to_rear")) {
         (Some(_), None) => length(reader, group, "to_hinge").map(Edge::FromHinge),
         (None, Some(_)) => length(reader, group, "to_rear").map(Edge::FromRear),
+        (None, None) if !group.lacks("to_hinge") || !group.lacks("to_rear") => None,
         (None, None) | (Some(_), Some(_)) => {
             let message = "this cut needs one place where it stops".to_owned();
             let help = "write `to_hinge: 5 cm` (behind the face's apex) or `to_rear: 6 cm` (from the rear), one of the two";

@@ -3,7 +3,7 @@
 use super::reader::{Group, Reader};
 use super::site::{pair, position};
 use super::steps::steps;
-use crate::document::{Node, NodeKind};
+use crate::document::{MERGE, Node, NodeKind};
 use crate::plan::model::{
     Crown, Defect, DefectKind, Face, FaceKind, Hazard, Leaf, Lean, Line, Measured, Spanned, Tree,
     TreeState, WayOut, Weigh, WeighCentre, WoodValues,
@@ -69,6 +69,7 @@ fn tree(reader: &mut Reader, node: &Node, route: &str) -> Option<Tree> {
     let lay = group
         .get("lay")
         .and_then(|n| reader.bearing(n, &group.path("lay")));
+    reader.whole_or_unread(id.as_ref(), species.is_some() && stump.is_some());
     let states: Vec<_> = TreeState::ALL.iter().map(|s| (s.word(), *s)).collect();
     let tree = Tree {
         at: group
@@ -115,6 +116,7 @@ fn tree(reader: &mut Reader, node: &Node, route: &str) -> Option<Tree> {
         approval: reader.text_at(group, "approval"),
         steps: hand_steps(reader, group),
         place: group.place,
+        route: route.to_owned(),
         id: id?,
         species: species?,
         stump: stump.as_ref()?.0.clone(),
@@ -131,7 +133,7 @@ fn stump(reader: &mut Reader, node: &Node, route: &str) -> Option<Stump> {
             let [along, across] = pair(reader, node, (route, "trees[].stump"))?;
             Some((along, Some(across)))
         }
-        NodeKind::Scalar { .. } | NodeKind::Map(_) => {
+        NodeKind::Scalar { .. } | NodeKind::Map(_) | NodeKind::Refused => {
             Some((reader.quantity(node, route, "trees[].stump")?, None))
         }
     }
@@ -159,7 +161,7 @@ fn each<T>(
 fn single(
     reader: &mut Reader,
     group: &Group<'_>,
-    (key, inner): (&str, &str),
+    (key, inner): (&str, &'static str),
 ) -> Option<Measured<Length>> {
     let node = group.get(key)?;
     let inner_group = reader.group(node, &group.path(key), &[inner])?;
@@ -203,8 +205,8 @@ fn lean(reader: &mut Reader, node: &Node, route: &str) -> Option<Lean> {
     )?;
     let views = ["view_a", "view_b", "facing"]
         .iter()
-        .any(|k| group.get(k).is_some());
-    if views {
+        .any(|k| group.get(k).is_some() || !group.lacks(k));
+    if views && group.get(MERGE).is_none() {
         let quantity = |reader: &mut Reader, key: &str| {
             let node = reader.need(&group, key, "3 deg")?;
             reader.quantity(node, &group.path(key), &format!("trees[].lean.{key}"))
@@ -277,6 +279,8 @@ fn defect(reader: &mut Reader, node: &Node, route: &str) -> Option<Defect> {
         )
     });
     Some(Defect {
+        route: route.to_owned(),
+        place: group.place,
         kind: kind?,
         at,
         size,
@@ -356,6 +360,7 @@ fn way_out(reader: &mut Reader, node: &Node, route: &str) -> Option<WayOut> {
         .get("cleared")
         .and_then(|n| reader.truth(n, &group.path("cleared")));
     Some(WayOut {
+        route: route.to_owned(),
         id: id?,
         bearing: bearing?,
         length: length?,
@@ -399,6 +404,7 @@ fn hazard(reader: &mut Reader, node: &Node, route: &str) -> Option<Hazard> {
     let control = reader.text_at(&group, "control");
     let owner = reader.text_at(&group, "owner");
     Some(Hazard {
+        route: route.to_owned(),
         id: id?,
         what: what?,
         control,

@@ -1,9 +1,14 @@
 //! The job, the saws, the limits and the tolerances.
 
-use super::reader::Reader;
-use crate::document::Node;
-use crate::plan::model::{Job, Limits, Location, Saw, Tolerances};
+use chrono::NaiveDate;
 
+use super::reader::Reader;
+use crate::diagnostic::Place;
+use crate::document::Node;
+use crate::plan::model::{Job, Limits, Location, Saw, Spanned, Tolerances};
+
+/// The job. What is missing or bad has its finding and stands as a blank: such a plan is looked
+/// through for more mistakes and never used.
 pub(super) fn job(reader: &mut Reader, node: &Node) -> Option<Job> {
     let known = &["name", "date", "rules", "leader", "intent", "place"];
     let group = reader.group(node, "job", known)?;
@@ -23,13 +28,38 @@ pub(super) fn job(reader: &mut Reader, node: &Node) -> Option<Job> {
         .map(|n| location(reader, n))
         .unwrap_or_default();
     Some(Job {
-        name: name?,
-        date: date?,
+        name: name.unwrap_or_else(|| blank(group.place)),
+        date: date.unwrap_or(Spanned {
+            value: NaiveDate::MIN,
+            place: group.place,
+        }),
         rules,
-        leader: leader?,
+        leader: leader.unwrap_or_else(|| blank(group.place)),
         intent,
         location,
     })
+}
+
+/// A job of which nothing can be read.
+pub(super) fn no_job(place: Place) -> Job {
+    Job {
+        name: blank(place),
+        date: Spanned {
+            value: NaiveDate::MIN,
+            place,
+        },
+        rules: vec![],
+        leader: blank(place),
+        intent: None,
+        location: Location::default(),
+    }
+}
+
+fn blank(place: Place) -> Spanned<String> {
+    Spanned {
+        value: String::new(),
+        place,
+    }
 }
 
 fn location(reader: &mut Reader, node: &Node) -> Location {
@@ -76,7 +106,9 @@ fn saw(reader: &mut Reader, node: &Node, route: &str) -> Option<Saw> {
         reader.quantity_at(&group, "rate", "saws[].rate"),
     );
     let (nose, kerf, displacement, rate) = saw;
+    reader.whole_or_unread(id.as_ref(), bar.is_some());
     Some(Saw {
+        route: route.to_owned(),
         id: id?,
         bar: bar?,
         nose,
