@@ -218,4 +218,32 @@ pub const EXPLANATIONS: &[Explanation] = &[
         "parts folder not usable",
         "The plan names a folder of its own texts and rule sets, and it cannot be used as it is. The built-in ones are not taken in its place without a word.",
     ),
+    tree(
+        "TREE-01",
+        "no cutting method proposed",
+        "The size-up found no way of cutting this tree with a chainsaw alone that keeps the trunk whole by a margin, or something keeps the sums from saying anything. `sizeup` gives every reason; a qualified person is asked.",
+    ),
+    tree(
+        "TREE-02",
+        "steps that cannot be carried out",
+        "A step means nothing where it stands, such as a hinge trimmed with nothing open behind it.",
+    ),
+    tree(
+        "TREE-03",
+        "sequence that fails on the virtual stump",
+        "Carried out in this order the stem splits, the bar is pinched or the tree sits back before the hinge is reached. `simulate` shows the centimetre.",
+    ),
+    tree(
+        "TREE-04",
+        "two estimates of the mass far apart",
+        "The biomass equation and the stem's volume give masses more than a quarter apart: usually a height or a diameter is mistaken. The heavier is used for every load.",
+    ),
 ];
+
+const fn tree(code: &'static str, title: &'static str, text: &'static str) -> Explanation {
+    sourced(
+        code,
+        (title, text),
+        ("the size-up and the virtual stump", Mark::Derived),
+    )
+}

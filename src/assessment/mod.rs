@@ -13,6 +13,7 @@ mod sets;
 mod sized;
 mod site;
 mod trees;
+mod verdicts;
 mod ways;
 
 use std::collections::BTreeMap;
@@ -20,10 +21,14 @@ use std::collections::BTreeMap;
 pub use codes::EXPLANATIONS;
 pub use explain::{Explained, all_explanations};
 
-use crate::diagnostic::Finding;
+use rayon::prelude::*;
+
+use crate::diagnostic::{Finding, Severity};
+use crate::method::Choice;
 use crate::parts::Parts;
 use crate::plan::{Partial, Plan, Tree};
 use crate::rules::{self, Facts, SizeUp};
+use crate::species;
 use look::{Check, Look};
 
 pub use inputs::{Since, distance, tree_input};
@@ -88,6 +93,74 @@ pub fn findings(plan: &Plan) -> Vec<Finding> {
         size_ups: &BTreeMap::new(),
     };
     look_through(&Partial::whole(plan.clone()), &ground)
+}
+
+/// Every finding about a plan that could be read, its trees sized up: the plan against itself and
+/// the rules, then what the size-ups say of trees that nothing else stops.
+pub fn sized_findings(plan: &Plan, parts: &Parts) -> Vec<Finding> {
+    let sized: Vec<SizedTree> = plan
+        .trees
+        .par_iter()
+        .map(|tree| size_up(plan, tree, &[]))
+        .collect();
+    let of_rules = plan
+        .trees
+        .iter()
+        .zip(&sized)
+        .map(|(tree, sized)| (tree.id.value.clone(), for_rules(sized)));
+    let size_ups: BTreeMap<String, SizeUp> = of_rules.collect();
+    let ground = Ground {
+        parts,
+        knows_species: &knows_species,
+        size_ups: &size_ups,
+    };
+    let mut findings = look_through(&Partial::whole(plan.clone()), &ground);
+    for (tree, sized) in plan.trees.iter().zip(&sized) {
+        let stopped = |f: &Finding| f.severity == Severity::Stop && is_of(f, tree);
+        if !findings.iter().any(stopped) {
+            findings.extend(verdicts::of(tree, sized));
+        }
+    }
+    findings
+}
+
+/// Whether a species is known, or which known ones are nearest.
+///
+/// # Errors
+/// The nearest names, where it is not known.
+pub fn knows_species(name: &str) -> Result<(), Vec<String>> {
+    match species::find(name) {
+        Some(_) => Ok(()),
+        None => Err(species::nearest(name)
+            .iter()
+            .map(|s| s.table_name.to_owned())
+            .collect()),
+    }
+}
+
+/// What the rules ask of a size-up, at best values.
+fn for_rules(sized: &SizedTree) -> SizeUp {
+    let Some(size_up) = &sized.size_up else {
+        return SizeUp::default();
+    };
+    let figures = &size_up.figures;
+    SizeUp {
+        method: match size_up.choice {
+            Choice::Proposed(method) => Some(method),
+            Choice::Refuse => None,
+        },
+        face_depth: figures.face.map(|f| f.depth),
+        face_opening: figures.face.map(|f| f.opening),
+        hinge: figures.hinge_thickness,
+        back_cut_height: size_up.layout.map(|l| l.back_cut_height),
+        strap: figures.strap.map(|s| s.thickness),
+        effective_lean: figures.effective_lean.map(|b| b.best),
+        lean_toward: figures.lean_toward,
+        side_lean: figures.side_lean.map(|b| b.best),
+        ring_radius: figures.ring,
+        escape_seconds: figures.escape.as_ref().map(|e| e.seconds.high),
+        fall_seconds: figures.fall.map(|f| f.seconds_min),
+    }
 }
 
 /// Every finding about a plan as far as it could be read. What is refused already is not said

@@ -95,12 +95,17 @@ pub fn findings_of(file: &PlanFile) -> Vec<Finding> {
                 Parts::built_in()
             }
         };
-        let ground = Ground {
-            parts: &parts,
-            knows_species: &|_| Ok(()),
-            size_ups: &BTreeMap::new(),
-        };
-        findings.extend(assessment::look_through(partial, &ground));
+        findings.extend(match &file.loaded.plan {
+            Some(plan) => assessment::sized_findings(plan, &parts),
+            None => {
+                let ground = Ground {
+                    parts: &parts,
+                    knows_species: &assessment::knows_species,
+                    size_ups: &BTreeMap::new(),
+                };
+                assessment::look_through(partial, &ground)
+            }
+        });
     }
     diagnostic::sort(&mut findings);
     findings
