@@ -6,7 +6,8 @@ use std::time::Duration;
 
 use thiserror::Error;
 
-use super::day::{Day, DayError, Ground};
+use super::beginning::{DayError, Ground};
+use super::day::Day;
 use super::terminal::{Heard, Screen};
 use crate::tui::{self, Look, View};
 

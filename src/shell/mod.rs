@@ -13,5 +13,6 @@ pub mod record_file;
 pub mod record_resume;
 pub mod terminal;
 pub mod job_folder;
+pub mod beginning;
 pub mod day;
 pub mod brief;
