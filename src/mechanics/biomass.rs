@@ -35,7 +35,7 @@ pub struct GroupLine {
 /// From 2.5 cm to the line's largest diameter.
 /// # Source
 /// Jenkins, Chojnacky, Heath and Birdsey 2003, Forest Science 49(1), Table 4 (opened in six
-/// transcriptions).
+/// copies).
 pub const fn group_line(group: BiomassGroup) -> GroupLine {
     let (b0, b1, largest_cm, rmse) = match group {
         BiomassGroup::CedarLarch => (-2.0336, 2.2592, 250.0, 0.294_574),
@@ -107,7 +107,7 @@ impl Shares {
 /// # Errors
 /// [`BiomassError::TooThin`].
 /// # Source
-/// Jenkins and others 2003, Table 6 (opened in two transcriptions).
+/// Jenkins and others 2003, Table 6 (opened in two copies).
 pub fn shares(wood_type: WoodType, dbh: Length) -> Result<Shares, BiomassError> {
     if dbh.in_cm() < 2.5 {
         return Err(BiomassError::TooThin(dbh));

@@ -22,7 +22,7 @@ const fn remembered(cite: &'static str) -> Source {
 
 macro_rules! strength_source {
     (O1) => {
-        opened("Wood Handbook, FPL-GTR-282 (2021), Table 5-3a, read in a transcription")
+        opened("Wood Handbook, FPL-GTR-282 (2021), Table 5-3a, read in a copy")
     };
     (O2) => {
         opened("Wood Handbook, FPL-GTR-190 (2010), Table 5-3a, page read")
@@ -31,7 +31,7 @@ macro_rules! strength_source {
         opened("Wood Handbook, Table 5-3a, rows quoted by an engineering data page")
     };
     (O5) => {
-        opened("Wood Handbook, FPL-GTR-190 (2010), Table 5-3a, rows read in a transcription")
+        opened("Wood Handbook, FPL-GTR-190 (2010), Table 5-3a, rows read in a copy")
     };
     (Mh) => {
         remembered("Wood Handbook, Table 5-3a, from memory, remembered well")

@@ -1,5 +1,5 @@
 //! The biomass equations against their printed figures.
-//! Source: Jenkins and others 2003, Tables 4 and 6 (opened in transcriptions); the masses worked
+//! Source: Jenkins and others 2003, Tables 4 and 6 (opened in copies); the masses worked
 //! from them; two examples of a height-aware method, GTR-WO-104 (2024), as cross-checks.
 
 use super::near;

@@ -1,5 +1,5 @@
 //! Fall times and tip speeds. Source: elliptic integrals and an integrator of differential
-//! equations, which agree to 5e-13 s; a forest lecturer's published tip speeds (opened).
+//! equations, which agree to 5e-13 s; a forester's published tip speeds (opened).
 
 use super::near;
 use stumpside::mechanics::fall::{Body, CrownDrag, Pendulum, drag_over_inertia, inertia};

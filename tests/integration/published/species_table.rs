@@ -1,5 +1,5 @@
 //! The species against rows of the published strength table, and names as people say them.
-//! Source: Wood Handbook, Table 5-3a (rows read in a transcription where not marked otherwise).
+//! Source: Wood Handbook, Table 5-3a (rows read in a copy where not marked otherwise).
 
 use stumpside::source::Mark;
 use stumpside::species::{self, BiomassGroup, WoodType};
