@@ -32,6 +32,8 @@ pub enum Since {
     Strap(Length),
     /// Back cut above the apex as cut.
     BackCutHeight(Length),
+    /// Overlap of the two face cuts.
+    Bypass(Length),
 }
 
 /// One standard deviation of a length measured at the stump with a tape or caliper. Source: our
@@ -110,6 +112,7 @@ fn apply(input: &mut TreeInput, since: Since) {
         Since::FaceDepth(depth) => input.overrides.face_depth = Some(depth),
         Since::Hinge(hinge) => input.overrides.hinge = Some(hinge),
         Since::Strap(strap) => input.overrides.strap = Some(strap),
+        Since::Bypass(bypass) => input.bypass = Some(bypass),
         Since::BackCutHeight(height) => input.overrides.back_cut_height = Some(height),
     }
 }

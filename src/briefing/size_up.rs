@@ -34,7 +34,8 @@ fn since(what: What, value: i64) -> Option<Since> {
         What::Hinge => Some(Since::Hinge(length)),
         What::Strap => Some(Since::Strap(length)),
         What::BackCutHeight => Some(Since::BackCutHeight(length)),
-        What::Count | What::Bypass | What::BehindHinge | What::BackCutDepth => None,
+        What::Bypass => Some(Since::Bypass(length)),
+        What::Count | What::BehindHinge | What::BackCutDepth => None,
     }
 }
 

@@ -137,7 +137,11 @@ pub(super) fn opening(ground: &Ground, stamp: FullStamp) -> Result<Opening, DayE
 }
 
 /// The state that the record's lines add up to.
-pub(super) fn resumed(lines: &[ParsedLine], opening: &Opening, job: Arc<Job>) -> Result<Session, DayError> {
+pub(super) fn resumed(
+    lines: &[ParsedLine],
+    opening: &Opening,
+    job: Arc<Job>,
+) -> Result<Session, DayError> {
     let first = lines.first().map(Roster::read);
     if let Some(Ok(roster)) = first
         && roster.plan_sha256 != opening.plan_sha256()

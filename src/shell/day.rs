@@ -3,7 +3,6 @@
 
 use std::sync::Arc;
 
-
 use super::beginning::{DayError, Ground, opening, resumed, unlock_open_keys};
 use super::clock::Clock;
 use super::entropy::{self};
@@ -292,7 +291,8 @@ impl Day {
                     Some(crate::session::Value::Chosen { digit: 1, .. })
                 )
         });
-        if !briefed && !(bad && before == Stage::AllClear) {
+        let show = briefed || (bad && before == Stage::AllClear);
+        if !show {
             return Ok(());
         }
         let code = self.code.clone();
@@ -314,12 +314,14 @@ impl Day {
                 Effect::Record(facts) => facts.as_slice(),
                 Effect::SizeUp { .. } => &[],
             })
-            .find_map(|fact| match fact {
-                Fact::Answer(answer) => answer
+            .find_map(|fact| {
+                let Fact::Answer(answer) = fact else {
+                    return None;
+                };
+                answer
                     .signer
                     .clone()
-                    .filter(|id| !self.keys.is_unlocked(id)),
-                _ => None,
+                    .filter(|id| !self.keys.is_unlocked(id))
             })
     }
 

@@ -1,6 +1,13 @@
 //! Times what a person feels, on the built program in a real pseudo-terminal: start to first
 //! screen, a key to its drawn answer, a key to the answer on disk. Printed, never asserted.
 
+#![expect(
+    clippy::unwrap_used,
+    clippy::disallowed_methods,
+    clippy::print_stdout,
+    reason = "a bench opens files, reads the clock and prints"
+)]
+
 use std::time::{Duration, Instant};
 
 #[path = "../integration/driver.rs"]

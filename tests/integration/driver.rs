@@ -143,9 +143,8 @@ impl Terminal {
 
     /// Waits for the end and gives the exit code.
     pub(crate) fn end(mut self) -> (u32, Vec<u8>, String) {
-        while self.listen(PATIENCE) {
-            panic!("the program does not end:\n{}", self.screen());
-        }
+        let runs = self.listen(PATIENCE);
+        assert!(!runs, "the program does not end:\n{}", self.screen());
         let code = self.child.wait().unwrap().exit_code();
         let screen = self.screen();
         (code, std::mem::take(&mut self.sent), screen)

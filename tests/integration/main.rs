@@ -1,5 +1,12 @@
 //! One test binary: the house, the published checks, the kits, the session, the screens.
 
+#![expect(
+    clippy::unwrap_used,
+    clippy::disallowed_methods,
+    clippy::wildcard_enum_match_arm,
+    reason = "tests open files, read clocks and stop at the first surprise"
+)]
+
 mod support;
 mod driver;
 mod terminal;
@@ -14,6 +21,7 @@ mod record_durability;
 mod record_folder;
 mod record_interop;
 mod commands_record;
+mod commands_sizeup;
 mod published;
 mod sample;
 mod virtual_stump;

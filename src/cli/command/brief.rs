@@ -9,8 +9,8 @@ use crate::cli::environment::{Environment, ScreenArgs, look};
 use crate::cli::exit::Exit;
 use crate::cli::output::Output;
 use crate::diagnostic::{Severity, count};
-use crate::shell::brief::{self, BriefError, Left};
 use crate::shell::beginning::{DayError, Ground};
+use crate::shell::brief::{self, BriefError, Left};
 use crate::shell::job_folder;
 use crate::shell::record_file::{Places, RecordError};
 

@@ -120,7 +120,14 @@ fn measured_facts(session: &Session) -> String {
             What::Hinge => "hinge",
             What::Strap => "strap",
             What::FaceDepth => "face",
-            _ => label.as_str(),
+            What::Wind
+            | What::Stump
+            | What::Lean
+            | What::Count
+            | What::BackCutHeight
+            | What::Bypass
+            | What::BehindHinge
+            | What::BackCutDepth => label.as_str(),
         };
         match facts.iter_mut().find(|(known, _)| known == name) {
             Some((_, old)) => *old = words,
