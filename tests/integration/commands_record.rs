@@ -395,3 +395,52 @@ fn crew_add_marks_demo_keys_and_takes_public_keys() {
     );
     assert!(lines[1].ends_with("private half elsewhere"), "{listed}");
 }
+
+#[test]
+fn the_demo_jobs_finished_record_verifies_and_its_tampered_copy_does_not() {
+    let demo = std::path::Path::new(env!("CARGO_MANIFEST_DIR")).join("demo-jobs/heron-bench");
+    let verify = |name: &str| {
+        let file = demo.join(name).join("record.jsonl");
+        let output = std::process::Command::new(env!("CARGO_BIN_EXE_stumpside"))
+            .args([
+                "record",
+                "verify",
+                file.to_str().unwrap(),
+                "--format",
+                "json",
+            ])
+            .output()
+            .unwrap();
+        let text = String::from_utf8(output.stdout).unwrap();
+        (
+            output.status.code(),
+            serde_json::from_str::<serde_json::Value>(&text).unwrap()["records"][0].clone(),
+        )
+    };
+    let (code, report) = verify("finished");
+    assert_eq!(
+        (code, report["verdict"].as_str()),
+        (Some(0), Some("closed-ok")),
+        "{report}"
+    );
+    // It is about the demo plan as it stands.
+    let plan = std::fs::read(demo.join("plan.yaml")).unwrap();
+    let first = std::fs::read_to_string(demo.join("finished/record.jsonl")).unwrap();
+    let opening: serde_json::Value = serde_json::from_str(first.lines().next().unwrap()).unwrap();
+    let hash = <sha2::Sha256 as sha2::Digest>::digest(&plan);
+    let hex: String = hash.iter().map(|b| format!("{b:02x}")).collect();
+    assert_eq!(
+        opening["plan_sha256"], hex,
+        "run `cargo bench --bench demo_record` after changing the demo plan"
+    );
+    let (code, report) = verify("tampered");
+    assert_eq!((code, report["verdict"].as_str()), (Some(1), Some("fail")));
+    let changed = report["bad"][0]["entry"].as_u64().unwrap();
+    let tampered = std::fs::read_to_string(demo.join("tampered/record.jsonl")).unwrap();
+    let line = usize::try_from(changed).unwrap();
+    assert_ne!(
+        tampered.lines().nth(line),
+        first.lines().nth(line),
+        "the first bad entry is the one changed"
+    );
+}
