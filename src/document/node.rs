@@ -44,7 +44,8 @@ impl Node {
     /// The words for what it is, for messages.
     pub fn describe(&self) -> &'static str {
         match &self.kind {
-            NodeKind::Scalar { text, plain: true } if text.is_empty() || text == "~" => "nothing",
+            NodeKind::Scalar { text, .. } if text.trim().is_empty() => "nothing",
+            NodeKind::Scalar { text, plain: true } if text == "~" => "nothing",
             NodeKind::Scalar { .. } => "a single value",
             NodeKind::List(_) => "a list",
             NodeKind::Map(_) => "a group of keys",

@@ -3,7 +3,7 @@
 use serde_yaml::granit_parser::{self, Event, Options, Parser, ScalarStyle, Span};
 
 use super::node::{Entry, Node, NodeKind};
-use super::refuse::{hidden_characters, refuse};
+use super::refuse::{escaped, hidden_characters, is_hidden, refuse};
 use crate::diagnostic::{Finding, Place};
 
 /// The largest plan text, in bytes (4 MiB).
@@ -128,7 +128,8 @@ enum Open {
     Map {
         start: usize,
         entries: Vec<Entry>,
-        key: Option<(String, Place)>,
+        /// The key whose value comes next; its name is missing where it was refused.
+        key: Option<(Option<String>, Place)>,
     },
 }
 
@@ -167,6 +168,13 @@ impl<'a> Walk<'a> {
             // The hidden character on this line is what the parser stumbled over.
             return;
         }
+        if error.info().contains("recursion limit") {
+            let message = format!("more than {LIMIT_LEVELS} levels stand inside each other");
+            let help = "a plan has at most six; look for brackets that are not closed";
+            let place = Place::new(byte, byte + 1);
+            self.findings.push(refuse("TEXT-09", place, message, help));
+            return;
+        }
         let message = format!("this is not readable as YAML: {}", error.info());
         let help = "look at this line and the one above: indentation by spaces, `key: value`, \
                     brackets closed, text with `: ` or `#` in quotes";
@@ -188,14 +196,16 @@ impl<'a> Walk<'a> {
         match event {
             Event::DocumentStart(_, version) => self.document_start(version.is_some(), place),
             Event::Scalar(text, style, _, tag) => {
-                let plain = style == ScalarStyle::Plain;
-                let kind = if tag.is_some() {
+                if tag.is_some() {
                     self.tag(place);
+                }
+                let refused = tag.is_some() || self.hides(&text, place);
+                let kind = if refused {
                     NodeKind::Refused
                 } else {
                     NodeKind::Scalar {
                         text: text.into_owned(),
-                        plain,
+                        plain: style == ScalarStyle::Plain,
                     }
                 };
                 self.node(Node { place, kind });
@@ -225,6 +235,22 @@ impl<'a> Walk<'a> {
             Event::UnresolvedAlias(_) => self.alias(place),
             Event::StreamStart | Event::StreamEnd | Event::DocumentEnd | _ => {}
         }
+    }
+
+    /// Whether a value has a hidden character in it, typed or written as an escape.
+    fn hides(&mut self, text: &str, place: Place) -> bool {
+        let Some(hidden) = text.chars().find(|c| is_hidden(*c)) else {
+            return false;
+        };
+        let within = |f: &Finding| (place.start..place.end).contains(&f.place.start);
+        let said = self
+            .findings
+            .iter()
+            .any(|f| f.code == "TEXT-02" && within(f));
+        if !said {
+            self.findings.push(escaped(hidden, place));
+        }
+        true
     }
 
     fn document_start(&mut self, versioned: bool, place: Place) {
@@ -270,7 +296,7 @@ impl<'a> Walk<'a> {
             key: Some((name, _)),
             ..
         }) = self.open.last()
-            && name == MERGE
+            && name.as_deref() == Some(MERGE)
         {
             // The merge key's own finding says it all.
             return self.node(refused);
@@ -282,12 +308,12 @@ impl<'a> Walk<'a> {
     }
 
     fn start(&mut self, open: Open) {
-        if let Some(Open::Map {
-            key: None, start, ..
-        }) = self.open.last()
-        {
+        if let Some(Open::Map { key: None, .. }) = self.open.last() {
             let message = "a key must be a single word, not a list or a group".to_owned();
-            let place = Place::new(*start, *start + 1);
+            let start = match &open {
+                Open::List { start, .. } | Open::Map { start, .. } => *start,
+            };
+            let place = Place::new(start, start + 1);
             self.findings
                 .push(refuse("TEXT-11", place, message, "write `key: value`"));
         }
@@ -327,7 +353,20 @@ impl<'a> Walk<'a> {
             Some(Open::List { items, .. }) => items.push(node),
             Some(Open::Map { entries, key, .. }) => match key.take() {
                 None => *key = Some(key_of(&node)),
-                Some((name, key_place)) => {
+                // A refused key stays as a merge key does: whoever reads the group knows that it is
+                // not whole.
+                Some((None, key_place)) => {
+                    let key = MERGE.to_owned();
+                    let value = node;
+                    if !entries.iter().any(|e| e.key == key) {
+                        entries.push(Entry {
+                            key,
+                            key_place,
+                            value,
+                        });
+                    }
+                }
+                Some((Some(name), key_place)) => {
                     if let Some(finding) = refused_key(&name, key_place, entries) {
                         self.findings.push(finding);
                     }
@@ -359,10 +398,10 @@ impl<'a> Walk<'a> {
     }
 }
 
-fn key_of(node: &Node) -> (String, Place) {
+fn key_of(node: &Node) -> (Option<String>, Place) {
     match &node.kind {
-        NodeKind::Scalar { text, .. } => (text.clone(), node.place),
-        NodeKind::List(_) | NodeKind::Map(_) | NodeKind::Refused => (String::new(), node.place),
+        NodeKind::Scalar { text, .. } => (Some(text.clone()), node.place),
+        NodeKind::List(_) | NodeKind::Map(_) | NodeKind::Refused => (None, node.place),
     }
 }
 

@@ -32,7 +32,21 @@ pub(super) fn hidden_characters(text: &str) -> Vec<Finding> {
         .collect()
 }
 
-fn is_hidden(c: char) -> bool {
+/// A hidden character written as an escape.
+pub(super) fn escaped(c: char, place: Place) -> Finding {
+    refuse(
+        "TEXT-02",
+        place,
+        format!(
+            "an escape stands for the hidden character U+{:04X}",
+            u32::from(c)
+        ),
+        "delete it: it can make a line read differently from what it says",
+    )
+}
+
+/// Whether a character can hide what a text says.
+pub(super) fn is_hidden(c: char) -> bool {
     let control = c.is_control() && !matches!(c, '\n' | '\r' | '\t');
     let bidi = matches!(c, '\u{061c}' | '\u{200e}' | '\u{200f}' | '\u{202a}'..='\u{202e}' | '\u{2066}'..='\u{2069}');
     let zero_width = matches!(

@@ -30,3 +30,6 @@ mod mechanics_properties;
 mod tree_properties;
 mod method_choice;
 mod tree_figures;
+mod check_command;
+mod plan_kit;
+mod why_command;

@@ -147,7 +147,11 @@ impl Reader {
                 (message, &format!("add `{key}: {example}`")),
             );
         }
-        group.get(key).filter(|n| !n.is_empty())
+        let node = group.get(key).filter(|n| !n.is_empty());
+        if node.is_none() {
+            self.spoiled.push(group.path(key));
+        }
+        node
     }
 
     /// A list.
@@ -226,6 +230,11 @@ impl Reader {
         if node.kind == NodeKind::Refused {
             self.spoiled.push(route.to_owned());
             return;
+        }
+        if node.is_empty() {
+            let message = "nothing is written behind this key".to_owned();
+            let help = format!("write {wanted}, or delete the key");
+            return self.stop("PLAN-02", (node.place, route), (message, &help));
         }
         let message = format!("{} stands here; expected {wanted}", node.describe());
         self.stop(

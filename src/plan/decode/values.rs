@@ -4,7 +4,7 @@
 use chrono::NaiveDate;
 
 use super::reader::{Group, Reader, scalar};
-use crate::document::{Node, NodeKind};
+use crate::document::Node;
 use crate::plan::fields::{self, DefaultSpread, Field};
 use crate::plan::model::{Measured, Spanned};
 use crate::plan::quantity::{self, Refused};
@@ -19,14 +19,12 @@ impl Reader {
         row: &str,
     ) -> Option<Measured<T>> {
         let field = fields::find(row).expect("every quantity decoded has its row in the table");
-        let NodeKind::Scalar { text, .. } = &node.kind else {
-            self.shape(
-                node,
-                route,
-                &format!("a quantity with its unit ({})", field.kind.unit_words()),
-            );
+        let text = scalar(node);
+        if text.is_empty() || node.is_empty() {
+            let wanted = format!("a quantity with its unit ({})", field.kind.unit_words());
+            self.shape(node, route, &wanted);
             return None;
-        };
+        }
         match quantity::read(text, field.kind) {
             Ok(read) => self.in_range(read, node, (route, field)),
             Err(refused) => {
@@ -80,7 +78,7 @@ impl Reader {
 
     fn refused_quantity(&mut self, refused: &Refused, node: &Node, (route, field): (&str, &Field)) {
         let units = field.kind.unit_words();
-        let first = field.kind.units().first().map_or("", |(word, _)| *word);
+        let first = usual_unit(field);
         let (code, help) = match refused {
             Refused::Empty => ("PLAN-02", format!("write a number and a unit ({units})")),
             Refused::Comma => ("PLAN-09", "write a point: `4.5`, not `4,5`".to_owned()),
@@ -108,10 +106,11 @@ impl Reader {
     /// A bearing.
     pub(super) fn bearing(&mut self, node: &Node, route: &str) -> Option<Spanned<Bearing>> {
         let help = "write degrees clockwise from true north, `110 deg`, or a compass word, `ENE`";
-        let NodeKind::Scalar { text, .. } = &node.kind else {
+        let text = scalar(node);
+        if text.is_empty() || node.is_empty() {
             self.shape(node, route, "a bearing");
             return None;
-        };
+        }
         match quantity::read_bearing(text) {
             Ok(value) => Some(Spanned {
                 value,
@@ -240,4 +239,13 @@ fn in_words(si: f64, field: &Field) -> String {
     };
     let number = (si / factor * 1000.0).round() / 1000.0;
     format!("{number} {word}")
+}
+
+/// The unit a person would most likely have meant, for an example.
+fn usual_unit(field: &Field) -> &'static str {
+    if field.kind == quantity::Kind::Length {
+        // What is measured at the stump is at most a few metres wide.
+        return if field.most <= 5.0 { "cm" } else { "m" };
+    }
+    field.kind.units().first().map_or("", |(word, _)| *word)
 }
