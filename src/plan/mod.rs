@@ -4,12 +4,16 @@
 mod codes;
 mod decode;
 pub mod fields;
-pub mod model;
+mod ground;
+mod model;
 mod nearest;
 pub mod quantity;
 pub mod step;
+mod tree;
 
 pub use codes::EXPLANATIONS;
 pub use decode::{Loaded, Partial, TOP_KEYS, load};
+pub use ground::*;
 pub use model::*;
 pub use nearest::nearest;
+pub use tree::*;

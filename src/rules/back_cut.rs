@@ -3,7 +3,7 @@
 use super::face::steps_at;
 use super::{Facts, Found, Rule, cite, short};
 use crate::parts::RuleSet;
-use crate::plan::model::FaceKind;
+use crate::plan::FaceKind;
 use crate::plan::step::Cut;
 use crate::source::Mark;
 use crate::units::Length;

@@ -2,7 +2,7 @@
 
 use super::{Facts, Found, Rule, TreeFacts, cite, degrees};
 use crate::parts::RuleSet;
-use crate::plan::model::FaceKind;
+use crate::plan::FaceKind;
 use crate::plan::step::Cut;
 use crate::source::Mark;
 

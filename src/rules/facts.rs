@@ -8,8 +8,8 @@ use chrono::NaiveDate;
 use super::ground::Spot;
 use super::order::Order;
 use crate::diagnostic::Place;
-use crate::plan::model::{Defect, DefectKind, Lean, Measured, Plan, Tree, TreeState};
 use crate::plan::step::{Cut, Edge, MethodName, StepAct};
+use crate::plan::{Defect, DefectKind, Lean, Measured, Plan, Tree, TreeState};
 use crate::units::{Angle, Bearing, Duration, Length};
 
 /// What a size-up gives of one tree; nothing where it gave nothing.

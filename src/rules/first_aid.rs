@@ -4,7 +4,7 @@ use chrono::NaiveDate;
 
 use super::{Facts, Found, Rule, cite};
 use crate::parts::{KitPlace, RuleSet};
-use crate::plan::model::{Person, Spanned};
+use crate::plan::{Person, Spanned};
 use crate::source::Mark;
 
 /// The rules of this family.

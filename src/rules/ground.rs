@@ -1,7 +1,7 @@
 //! Distances and sectors on the ground, in metres east and north of the plan's origin. It knows
 //! points, courses and bearings, no rules.
 
-use crate::plan::model::{Feature, Measured};
+use crate::plan::{Feature, Measured};
 use crate::units::{Angle, Bearing, Length};
 
 /// A point on the ground.

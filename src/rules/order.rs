@@ -3,7 +3,7 @@
 
 use std::collections::BTreeMap;
 
-use crate::plan::model::Tree;
+use crate::plan::Tree;
 
 /// The written order of felling.
 #[derive(Debug, Clone, PartialEq, Eq)]

@@ -4,7 +4,7 @@ use super::ground::Sector;
 use super::{Facts, Found, Rule, TreeFacts, cite, long};
 use crate::diagnostic::Place;
 use crate::parts::RuleSet;
-use crate::plan::model::{Feature, FeatureKind};
+use crate::plan::{Feature, FeatureKind};
 use crate::source::Mark;
 
 /// The rules of this family.

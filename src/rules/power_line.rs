@@ -3,7 +3,7 @@
 use super::positions::features_of;
 use super::{Facts, Found, Rule, cite, long};
 use crate::parts::{Figures, RuleSet};
-use crate::plan::model::FeatureKind;
+use crate::plan::FeatureKind;
 use crate::source::Mark;
 use crate::units::{Length, Voltage};
 

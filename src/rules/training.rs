@@ -2,7 +2,7 @@
 
 use super::{Facts, Found, Rule, cite, short};
 use crate::parts::RuleSet;
-use crate::plan::model::{Person, Role, Spanned, Tree};
+use crate::plan::{Person, Role, Spanned, Tree};
 use crate::source::Mark;
 
 /// The rules of this family.

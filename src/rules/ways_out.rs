@@ -4,7 +4,7 @@
 use super::{Facts, Found, Rule, TreeFacts, cite, degrees, long, turn};
 use crate::diagnostic::Place;
 use crate::parts::RuleSet;
-use crate::plan::model::WayOut;
+use crate::plan::WayOut;
 use crate::source::Mark;
 use crate::units::Angle;
 
@@ -203,7 +203,7 @@ fn time(facts: &Facts<'_>, _: &RuleSet) -> Vec<Found> {
         if let Some((escape, fall)) = times
             && escape > fall
         {
-            found.push(Found::caution(
+            found.push(Found::note(
                 tree.at("ways_out"),
                 format!(
                     "leaving takes {:.1} s on the fastest way out; the shortest fall takes {:.1} s",

@@ -105,7 +105,7 @@ fn codes_in(text: &str) -> BTreeSet<String> {
             let Some((kind, number)) = word.split_once('-') else {
                 return false;
             };
-            ["TEXT", "PLAN", "JOB", "LOG"].contains(&kind)
+            ["TEXT", "PLAN", "JOB", "LOG", "TREE"].contains(&kind)
                 && number.len() == 2
                 && number.bytes().all(|b| b.is_ascii_digit())
         })

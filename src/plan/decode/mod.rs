@@ -13,7 +13,7 @@ use std::collections::BTreeSet;
 
 use crate::diagnostic::{Finding, Place, Severity};
 use crate::document::{self, Node, NodeKind};
-use crate::plan::model::{DisplayUnits, Plan};
+use crate::plan::{DisplayUnits, Plan};
 use reader::Reader;
 
 /// What reading a plan gave: a plan where it could be read, and everything found.

@@ -2,7 +2,7 @@
 
 use super::reader::{Group, Reader};
 use crate::document::Node;
-use crate::plan::model::{Emergency, Person, QualifiedPerson, Role, Spanned};
+use crate::plan::{Emergency, Person, QualifiedPerson, Role, Spanned};
 
 /// At most this many people in a plan.
 const LIMIT_PEOPLE: usize = 200;

@@ -5,7 +5,7 @@ use std::collections::BTreeSet;
 
 use crate::diagnostic::{Finding, Place, Severity};
 use crate::document::{Entry, MERGE, Node, NodeKind};
-use crate::plan::model::Spanned;
+use crate::plan::Spanned;
 use crate::plan::nearest::{nearest, slip_of};
 
 /// Collects findings while decoding.

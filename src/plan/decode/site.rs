@@ -2,7 +2,7 @@
 
 use super::reader::Reader;
 use crate::document::{Node, NodeKind};
-use crate::plan::model::{Feature, FeatureKind, Measured, Site, Slope};
+use crate::plan::{Feature, FeatureKind, Measured, Site, Slope};
 use crate::units::Length;
 
 /// At most this many features in a plan.

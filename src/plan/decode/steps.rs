@@ -2,7 +2,7 @@
 
 use super::reader::{Group, Reader};
 use crate::document::Node;
-use crate::plan::model::Spanned;
+use crate::plan::Spanned;
 use crate::plan::step::{Cut, Edge, Step, StepAct, Task, Timing};
 use crate::units::{Duration, Length};
 

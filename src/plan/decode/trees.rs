@@ -4,11 +4,11 @@ use super::reader::{Group, Reader};
 use super::site::{pair, position};
 use super::steps::steps;
 use crate::document::{MERGE, Node, NodeKind};
-use crate::plan::model::{
+use crate::plan::step::MethodName;
+use crate::plan::{
     Crown, Defect, DefectKind, Face, FaceKind, Hazard, Leaf, Lean, Line, Measured, Spanned, Tree,
     TreeState, WayOut, Weigh, WeighCentre, WoodValues,
 };
-use crate::plan::step::MethodName;
 use crate::units::Length;
 
 /// At most this many trees in a plan.

@@ -6,8 +6,8 @@ use chrono::NaiveDate;
 use super::reader::{Group, Reader, scalar};
 use crate::document::Node;
 use crate::plan::fields::{self, DefaultSpread, Field};
-use crate::plan::model::{Measured, Spanned};
 use crate::plan::quantity::{self, Refused};
+use crate::plan::{Measured, Spanned};
 use crate::units::{Bearing, FromSi, Reading};
 
 impl Reader {

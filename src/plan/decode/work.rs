@@ -5,7 +5,7 @@ use chrono::NaiveDate;
 use super::reader::Reader;
 use crate::diagnostic::Place;
 use crate::document::Node;
-use crate::plan::model::{Job, Limits, Location, Saw, Spanned, Tolerances};
+use crate::plan::{Job, Limits, Location, Saw, Spanned, Tolerances};
 
 /// The job. What is missing or bad has its finding and stands as a blank: such a plan is looked
 /// through for more mistakes and never used.
