@@ -74,9 +74,9 @@ fn what_the_size_ups_say_is_found() {
         ),
         ["LOG-27", "TREE-01"]
     );
-    let out_of_order = "    steps: [{cut: hinge-trim, hinge: 4 cm}, {cut: face-floor, depth: 9 cm}, {cut: back-cut, to_hinge: 4 cm}]";
-    assert!(with_change("    steps: auto", out_of_order).contains(&"TREE-02"));
-    assert_eq!(with_change("height: 17 m", "height: 9 m"), ["TREE-04"]);
+    let no_strap = "    steps: [{cut: face-slope, depth: 9 cm, opening: 70 deg}, {cut: face-floor, depth: 9 cm}, {cut: strap-release}, {cut: back-cut, to_hinge: 4 cm}]";
+    assert!(with_change("    steps: auto", no_strap).contains(&"TREE-02"));
+    assert_eq!(with_change("height: 22 m", "height: 12 m"), ["TREE-04"]);
 }
 
 #[test]
