@@ -7,7 +7,7 @@ use super::beginning::{DayError, Ground, opening, resumed, unlock_open_keys};
 use super::clock::Clock;
 use super::entropy::{self};
 use super::job_folder::{self};
-use super::key_store::KeyStore;
+use super::key_store::{KeyError, KeyStore};
 use super::record_file::{RecordError, RecordFile};
 use crate::briefing::{self, Job};
 use crate::parts::What;
@@ -218,6 +218,10 @@ impl Day {
                     "not signed: {} is not the key the plan names",
                     path.display()
                 ));
+                Ok(())
+            }
+            Err(KeyError::WrongPassphrase(_)) => {
+                self.desk.say("wrong passphrase: not signed, not written");
                 Ok(())
             }
             Err(error) => {

@@ -7,7 +7,9 @@ use std::path::{Path, PathBuf};
 use super::files::{self, Readers};
 use super::key_store::KeyStore;
 pub use super::record_error::RecordError;
-use super::record_store::{FileStore, Media, Store, check_media, keep_reserve, spend_reserve};
+use super::record_store::{
+    FileStore, Media, Store, check_media, keep_reserve, outlive_file_limits, spend_reserve,
+};
 use super::watermark::{Watermark, default_dir};
 use crate::record::draft::{Written, after, check_duty, encode_batch};
 use crate::record::kind::kept_for_the_end;
@@ -98,6 +100,7 @@ impl RecordFile {
             let list = places.job.join(SIGNERS_FILE);
             files::write_or_same(&list, crew.as_bytes(), Readers::Everyone)?;
         }
+        outlive_file_limits(&path)?;
         keep_reserve(&places.job);
         let store = if unbegun {
             FileStore::open(&path)?

@@ -68,11 +68,7 @@ impl FileStore {
     }
 
     fn hold(file: File, path: &Path) -> Result<Self, RecordError> {
-        let too_large = Arc::new(AtomicBool::new(false));
-        // Without a handler a file-size limit kills the process; with one the write fails, which
-        // is told to the person at the keys.
-        signal_hook::flag::register(SIGXFSZ, too_large)
-            .map_err(|source| FileError::write(path, source))?;
+        outlive_file_limits(path)?;
         match file.try_lock() {
             Ok(()) => Ok(Self {
                 file,
@@ -132,6 +128,18 @@ impl Store for FileStore {
             }
         }
     }
+}
+
+/// Without a handler a file-size limit kills the process; with one the write fails, which is told
+/// to the person at the keys.
+///
+/// # Errors
+/// [`FileError`] where the handler cannot be set.
+pub fn outlive_file_limits(path: &Path) -> Result<(), FileError> {
+    let too_large = Arc::new(AtomicBool::new(false));
+    signal_hook::flag::register(SIGXFSZ, too_large)
+        .map_err(|source| FileError::write(path, source))?;
+    Ok(())
 }
 
 /// Writes the reserve file that is deleted when the disk is full; without room for it there is none.

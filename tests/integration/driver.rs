@@ -41,9 +41,22 @@ impl Terminal {
             pixel_height: 0,
         };
         let pair = native_pty_system().openpty(size).unwrap();
-        let mut command = CommandBuilder::new(env!("CARGO_BIN_EXE_stumpside"));
+        let mut command = CommandBuilder::new("sh");
+        // A limit on the size of files stands in for a full disk: the shell sets it, then becomes
+        // the program.
+        let limit = more
+            .iter()
+            .find(|(name, _)| *name == "FILE_BLOCKS")
+            .map(|(_, blocks)| *blocks);
+        let set = limit.map_or(String::new(), |blocks| format!("ulimit -f {blocks}; "));
+        command.args([
+            "-c",
+            &format!("{set}exec \"$0\" \"$@\""),
+            env!("CARGO_BIN_EXE_stumpside"),
+        ]);
         command.args(arguments);
         command.env_clear();
+        command.env("PATH", "/usr/local/bin:/usr/bin:/bin");
         command.env("TERM", "xterm-256color");
         command.env("LANG", "C.UTF-8");
         command.env("TZ", "UTC");

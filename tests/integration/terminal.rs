@@ -98,7 +98,11 @@ impl Dice {
 
 /// Answers that stand in the record, in order, as their item and stage.
 fn answers_on_disk(job: &Path) -> Vec<String> {
-    let text = std::fs::read_to_string(job.join("record.jsonl")).unwrap_or_default();
+    answers_in(&job.join("record.jsonl"))
+}
+
+fn answers_in(record: &Path) -> Vec<String> {
+    let text = std::fs::read_to_string(record).unwrap_or_default();
     text.lines()
         .filter_map(|line| serde_json::from_str::<serde_json::Value>(line).ok())
         .filter(|v| {
@@ -312,4 +316,156 @@ fn an_idle_screen_sends_little() {
     assert!(a_second <= 200, "{a_second} bytes a second");
     terminal.keys("q\r");
     assert_eq!(terminal.end().0, 0);
+}
+
+#[test]
+fn a_write_that_fails_is_said_and_nothing_shown_as_recorded_is_lost() {
+    let folder = tempfile::tempdir().unwrap();
+    let job = folder.path().join("job");
+    let arguments = ["demo", "--job", job.to_str().unwrap()];
+    // Sixty-four blocks of 512 bytes: the record outgrows them before the first tree is down.
+    let limit = (folder.path(), &[("FILE_BLOCKS", "64")][..]);
+    let mut terminal = Terminal::start_with(&arguments, (80, 24), limit);
+    terminal.wait("roll call", |s| s.contains("> 1 >"));
+    let failed = |s: &str| s.contains("NOT RECORDED");
+    let mut acknowledged = 0;
+    for _ in 0..200 {
+        terminal.look();
+        let screen = terminal.screen();
+        if failed(&screen) && screen.contains("paper") {
+            break;
+        }
+        let asks = !screen.contains("any key = back");
+        let (before, again) = (position(&screen), failed(&screen));
+        terminal.keys(&keys_for(&screen));
+        let after = terminal.wait("an answer or the failure", |s| {
+            position(s) != before || (failed(s) && !again) || s.contains("paper")
+        });
+        // The screen moved on without a word of failure: this answer is shown as recorded.
+        acknowledged += usize::from(asks && position(&after) != before && !failed(&after));
+    }
+    assert!(failed(&terminal.screen()), "{}", terminal.screen());
+    assert!(
+        acknowledged > 10,
+        "{acknowledged} answers were acknowledged first"
+    );
+    let newest = std::fs::read_dir(&job)
+        .unwrap()
+        .map(|entry| entry.unwrap().path())
+        .filter(|path| path.extension().is_some_and(|e| e == "jsonl"))
+        .map(|path| answers_in(&path).len())
+        .max();
+    assert!(
+        newest >= Some(acknowledged),
+        "{newest:?} of {acknowledged} are on disk"
+    );
+    terminal.keys("q\r");
+    let (code, sent, _) = terminal.end();
+    assert_eq!(code, 4);
+    assert!(String::from_utf8_lossy(&sent).contains("go on on paper"));
+}
+
+#[test]
+fn what_cannot_be_opened_is_said_once_with_its_exit_code() {
+    let folder = tempfile::tempdir().unwrap();
+    let job = folder.path().join("job");
+    let job_word = job.to_str().unwrap();
+    let start = |arguments: &[&str]| Terminal::start(arguments, (80, 24), folder.path());
+    let refused = |arguments: &[&str], code: u32, words: &str| {
+        let mut terminal = start(arguments);
+        while terminal.listen(Duration::from_secs(1)) {}
+        let (ended, sent, _) = terminal.end();
+        let said = String::from_utf8_lossy(&sent).into_owned();
+        assert_eq!(ended, code, "{said}");
+        assert!(said.contains(words), "{said}");
+        assert!(!said.contains("\x1b[?1049h"), "no screen was taken");
+    };
+    let mut first = start(&["demo", "--job", job_word]);
+    first.wait("roll call", |s| s.contains("> 1 >"));
+    first.answer();
+    let plan = job.join("plan.yaml");
+    let before = std::fs::read(job.join("record.jsonl")).unwrap();
+    // A second program on the same record.
+    refused(
+        &["brief", plan.to_str().unwrap()],
+        4,
+        "another program holds the record open",
+    );
+    first.keys("q\r");
+    assert_eq!(first.end().0, 0);
+    // Another plan on a record.
+    let other = folder.path().join("other.yaml");
+    let text = std::fs::read_to_string(&plan)
+        .unwrap()
+        .replace("keys/", &format!("{job_word}/keys/"));
+    std::fs::write(&other, text).unwrap();
+    refused(
+        &["brief", other.to_str().unwrap(), "--job", job_word],
+        1,
+        "about another plan",
+    );
+    // A job folder that cannot be made, a plan that is not there, a folder as a plan.
+    refused(
+        &["brief", plan.to_str().unwrap(), "--job", "/dev/null/job"],
+        4,
+        "/dev/null/job",
+    );
+    refused(&["brief", "nowhere.yaml"], 3, "nowhere.yaml");
+    refused(&["brief", job_word], 3, job_word);
+    assert!(
+        std::fs::read(job.join("record.jsonl"))
+            .unwrap()
+            .starts_with(&before)
+    );
+}
+
+#[test]
+fn a_key_with_a_passphrase_is_asked_for_and_a_wrong_one_signs_nothing() {
+    let folder = tempfile::tempdir().unwrap();
+    let job = folder.path().join("job");
+    let (code, _, talk) = run(&["demo", "--copy-only", "--job", job.to_str().unwrap()]);
+    assert_eq!(code, 0, "{talk}");
+    // The spotter's demo key gives way to one of his own with a passphrase.
+    for name in ["keys/rui", "keys/rui.pub"] {
+        std::fs::remove_file(job.join(name)).unwrap();
+    }
+    let secret = folder.path().join("secret");
+    std::fs::write(&secret, "wet bark\n").unwrap();
+    let arguments = [
+        "crew",
+        "add",
+        "rui",
+        "--name",
+        "Rui Halloran",
+        "--job",
+        job.to_str().unwrap(),
+        "--passphrase-file",
+        secret.to_str().unwrap(),
+    ];
+    let (code, _, talk) = run(&arguments);
+    assert_eq!(code, 0, "{talk}");
+    let plan = job.join("plan.yaml");
+    let mut terminal = Terminal::start(&["brief", plan.to_str().unwrap()], (80, 24), folder.path());
+    terminal.wait("roll call", |s| s.contains("> 1 >"));
+    while !terminal.screen().contains("BRIEFED: RUI") {
+        terminal.answer();
+    }
+    let count = || answers_on_disk(&job).len();
+    let before = count();
+    terminal.keys("4\r");
+    terminal.wait("the passphrase", |s| {
+        s.contains("Passphrase of Rui Halloran's key")
+    });
+    terminal.keys("dry bark\r");
+    terminal.wait("the refusal", |s| s.contains("wrong passphrase"));
+    assert_eq!(count(), before);
+    assert!(!terminal.screen().contains("dry bark"));
+    terminal.keys("4\r");
+    terminal.wait("the passphrase", |s| {
+        s.contains("Passphrase of Rui Halloran's key")
+    });
+    terminal.keys("wet bark\r");
+    terminal.wait("the code to carry away", |s| s.contains("any key = back"));
+    assert_eq!(count(), before + 1);
+    assert!(!String::from_utf8_lossy(&terminal.sent).contains("wet bark"));
 }

@@ -5,7 +5,7 @@ use ratatui::layout::Rect;
 use super::View;
 use super::gauge;
 use super::header::cut;
-use super::paper::Paper;
+use super::paper::{Paper, wrap};
 use crate::briefing::{Field, Form, Item, Kind};
 use crate::parts::What;
 use crate::session::{Done, Session, Stage, Value};
@@ -155,7 +155,11 @@ fn foot(view: &View<'_>, paper: &mut Paper<'_>, part: Rect) {
     } else {
         view.desk.message.clone()
     };
-    paper.bold(part.x, bottom - 4, &cut(&message, width));
+    let lines = wrap(&message, width);
+    let rows = u16::try_from(lines.len().min(3)).unwrap_or(1);
+    for (row, line) in (bottom - 3 - rows..).zip(lines.iter().take(3)) {
+        paper.bold(part.x, row, &format!("{line:width$}"));
+    }
     paper.text(part.x, bottom - 3, "Last two done, RECORDED");
     let done: Vec<&Done> = session
         .done
