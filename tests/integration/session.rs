@@ -7,7 +7,7 @@ use stumpside::record::{Stamp as FullStamp, facts};
 use stumpside::session::{Answer, Fact, Recorded, Session, Stage, replay};
 use stumpside::tui::Key;
 
-use crate::support::{Bench, demo_job};
+use crate::support::{Bench, demo_job, tries};
 
 /// Answers every question with its first answer until the day is closed.
 fn whole_day(bench: &mut Bench) {
@@ -158,7 +158,7 @@ fn moves() -> impl Strategy<Value = Vec<Move>> {
 }
 
 proptest! {
-    #![proptest_config(ProptestConfig { cases: 300, ..ProptestConfig::default() })]
+    #![proptest_config(ProptestConfig { cases: tries("STUMPSIDE_SEQUENCES", 300), ..ProptestConfig::default() })]
 
     #[test]
     fn random_keys_keep_live_and_replayed_state_equal_and_the_hold_line_held(moves in moves()) {

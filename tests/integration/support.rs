@@ -11,6 +11,14 @@ use stumpside::session::{Act, Effect, Event, Fact, Recorded, Session, Stamp, out
 use stumpside::tui::{Desk, Intent, Key};
 use stumpside::units::{Angle, Length};
 
+/// How often a test tries: its own number, or the longer gate's.
+pub(crate) fn tries(name: &str, usual: u32) -> u32 {
+    std::env::var(name)
+        .ok()
+        .and_then(|n| n.parse().ok())
+        .unwrap_or(usual)
+}
+
 /// The demo job's plan as text.
 pub(crate) const DEMO_PLAN: &str = include_str!("../../demo-jobs/heron-bench/plan.yaml");
 
