@@ -55,7 +55,7 @@ pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>, (part, below): (Rect,
         );
     } else {
         side_lines(
-            session,
+            view,
             paper,
             Rect::new(
                 part.x + 1,
@@ -147,7 +147,8 @@ fn stump_lines(session: &Session, card: &Card, (width, height): (u16, u16)) -> V
 }
 
 /// What stands below the ladder where there is no stump: the story of the job, or what matters now.
-fn side_lines(session: &Session, paper: &mut Paper<'_>, part: Rect) {
+fn side_lines(view: &View<'_>, paper: &mut Paper<'_>, part: Rect) {
+    let session = view.session;
     let job = &session.job;
     let mut words: Vec<String> = vec![];
     match session.stage {
@@ -167,7 +168,10 @@ fn side_lines(session: &Session, paper: &mut Paper<'_>, part: Rect) {
             words.push(format!("Named: {}", named.join("; ")));
         }
         Stage::Stopped => {
-            words.push("The place is kept. Saw off. Nobody goes under the lean.".to_owned())
+            words.push("The place is kept. Saw off. Nobody goes under the lean.".to_owned());
+            words.push(format!("Record code {}", view.code));
+            words.push("IF SOMEBODY IS HURT".to_owned());
+            words.extend(job.emergency.iter().cloned());
         }
         Stage::ShortTalk
         | Stage::WalkUp
