@@ -8,6 +8,7 @@ use crate::method::{Choice, SizeUp};
 use crate::parts::{Parts, What};
 use crate::plan::step::{Cut, Step, StepAct, Task};
 use crate::plan::{Measured, Plan, Tree};
+use crate::simulate::Verdict;
 use crate::units::{Angle, Band, FromSi, Length, Speed};
 
 /// Sizes a tree up with what was measured, in the record's units, and makes its card. A tree the
@@ -82,6 +83,14 @@ fn card(tree: &Tree, sized: &SizedTree, parts: &Parts) -> Card {
     card.refused.extend(size_up.refused.iter().map(refusal));
     cases(&mut card, size_up);
     card.figures = figures(&size_up.figures);
+    card.stops = match &sized.run {
+        Some(Ok(run)) => match run.verdict {
+            Verdict::Splits | Verdict::Pinches | Verdict::SitsBack => vec!["TREE-03".to_owned()],
+            Verdict::Holds | Verdict::Moves => vec![],
+        },
+        Some(Err(_)) => vec!["TREE-02".to_owned()],
+        None => vec![],
+    };
     if let (Choice::Proposed(method), true) = (size_up.choice, sized.may_be_cut()) {
         card.method = Some(method.word().to_owned());
         rungs(&mut card, &sized.steps, parts);

@@ -60,18 +60,7 @@ pub fn apply(session: &Session, recorded: &Recorded) -> Session {
                 talk(&mut next, changes.clone(), recorded.seq);
             }
         }
-        Fact::TakenBack {
-            stage, tree, item, ..
-        } => {
-            if let Some(done) = next
-                .done
-                .iter_mut()
-                .rev()
-                .find(|d| d.stands && d.stage == *stage && d.tree == *tree && d.item == *item)
-            {
-                done.stands = false;
-            }
-        }
+        Fact::TakenBack { .. } => taken_back(&mut next, &recorded.fact),
         Fact::Stop { .. } => stop(&mut next, recorded),
         Fact::Resumed => resume(&mut next),
         Fact::TalkAgain { changes } => talk(&mut next, changes.clone(), recorded.seq),
@@ -94,6 +83,28 @@ pub fn apply(session: &Session, recorded: &Recorded) -> Session {
         Fact::RefusedKeys { .. } | Fact::ReceiptShown { .. } => {}
     }
     next
+}
+
+/// The answer no longer stands; what was sized up from it is sized up again without it.
+fn taken_back(next: &mut Session, fact: &Fact) {
+    let Fact::TakenBack {
+        stage, tree, item, ..
+    } = fact
+    else {
+        return;
+    };
+    let same = |d: &&mut Done| d.stands && d.stage == *stage && d.tree == *tree && d.item == *item;
+    let Some(done) = next.done.iter_mut().rev().find(same) else {
+        return;
+    };
+    done.stands = false;
+    let measured = done
+        .values
+        .iter()
+        .any(|v| matches!(v, Value::Measured { .. }));
+    if let (true, Some(tree)) = (measured, &next.tree) {
+        next.size_up_due = Some((tree.clone(), "an answer was taken back".to_owned()));
+    }
 }
 
 fn push_done(next: &mut Session, answer: &Answer, recorded: &Recorded) {
@@ -222,6 +233,14 @@ fn revealed(next: &mut Session, recorded: &Recorded) {
         let todo = format!(
             "{}: {}, {}: {}. Look again together, then both answer again.",
             first.said.told_by, first.typed, second.said.told_by, second.typed
+        );
+        next.kept_open = Some((item.clone(), todo));
+        return;
+    }
+    if *what == What::Count && second.value != 1 {
+        let todo = format!(
+            "{} inside: only the sawyer may be. Bring everyone else out, count again.",
+            second.typed
         );
         next.kept_open = Some((item.clone(), todo));
         return;

@@ -239,6 +239,13 @@ impl Session {
             if let Some(first) = first {
                 return Some(format!("{first} must be down first."));
             }
+            let here = |id: &String| self.present.get(id).copied().unwrap_or(false);
+            if let Some(sawyer) = tree.sawyer.as_ref().filter(|id| !here(id)) {
+                let name = self.job.name_of(sawyer);
+                return Some(format!(
+                    "{name} is not here: plan it anew for a sawyer who is."
+                ));
+            }
             let card = self.cards.get(&tree.id)?;
             if card.method.is_none() {
                 let ask = self

@@ -1,6 +1,7 @@
 //! How a day is begun or gone on with: keys that need no passphrase, line 0, the state a record
 //! adds up to. It writes nothing.
 
+use std::collections::BTreeMap;
 use std::sync::Arc;
 
 use thiserror::Error;
@@ -75,6 +76,8 @@ pub struct Ground {
     pub plan_path: std::path::PathBuf,
     /// The parts.
     pub parts: Parts,
+    /// Codes of the plan's stop findings, by tree: such a tree is not begun.
+    pub stops: BTreeMap<String, Vec<String>>,
     /// The crew with their keys.
     pub crew: Vec<CrewMember>,
     /// Where the record lies.

@@ -124,7 +124,13 @@ impl Day {
     }
 
     fn card(&self, tree: &str, measured: &[(What, i64)]) -> briefing::Card {
-        briefing::size_up(&self.ground.plan, tree, (measured, &self.ground.parts))
+        let mut card = briefing::size_up(&self.ground.plan, tree, (measured, &self.ground.parts));
+        for code in self.ground.stops.get(tree).into_iter().flatten() {
+            if !card.stops.contains(code) {
+                card.stops.push(code.clone());
+            }
+        }
+        card
     }
 
     /// The record's code now.

@@ -115,8 +115,15 @@ fn hold_line_was_held(facts: &[Recorded]) {
                     tree: t,
                     equal,
                     stage,
+                    second,
                     ..
-                } => i == item && t == tree && *equal && *stage == Stage::HoldLine,
+                } => {
+                    i == item
+                        && t == tree
+                        && *equal
+                        && second.value == 1
+                        && *stage == Stage::HoldLine
+                }
                 _ => false,
             });
             assert!(
@@ -308,4 +315,56 @@ fn a_blind_look_is_held_as_a_commitment_and_unequal_answers_hold() {
     assert!(!equal);
     assert_eq!((first.value, second.value), (2_000, 9_000));
     assert_eq!(bench.session.lit().unwrap().id, "lean");
+}
+
+#[test]
+fn more_heads_inside_than_the_sawyers_keep_the_hold_line_shut() {
+    let mut bench = Bench::new();
+    while bench.session.stage != Stage::HoldLine {
+        bench.answer(0);
+    }
+    bench.keys("3\n1\n3\n1\n");
+    assert_eq!(bench.session.lit().unwrap().id, "count");
+    bench.keys("1\n1\n1\n1\n");
+    assert_eq!(bench.session.lit().unwrap().id, "out");
+}
+
+#[test]
+fn a_measured_answer_taken_back_is_sized_up_again() {
+    let mut bench = Bench::new();
+    while bench.session.lit().unwrap().id != "step.face-floor" {
+        bench.answer(0);
+    }
+    let sized = |bench: &Bench| {
+        bench
+            .facts
+            .iter()
+            .filter(|r| matches!(r.fact, Fact::SizedUp { .. }))
+            .count()
+    };
+    let before = sized(&bench);
+    bench.keys("u");
+    assert_eq!(bench.session.lit().unwrap().id, "step.face-slope");
+    assert_eq!(sized(&bench), before + 1);
+}
+
+#[test]
+fn a_tree_whose_sawyer_is_absent_is_not_begun() {
+    let mut bench = Bench::new();
+    bench.answer(0);
+    bench.keys("2\n2\n");
+    while bench.session.stage != Stage::Choose {
+        bench.answer(0);
+    }
+    bench.keys("1\n1\n");
+    assert_eq!(bench.session.stage, Stage::Choose);
+    assert!(
+        bench
+            .session
+            .kept_open
+            .as_ref()
+            .unwrap()
+            .1
+            .contains("Tamsin Okoro is not here")
+    );
 }

@@ -1,5 +1,6 @@
 //! `brief`: opens the terminal program on a job, or goes on with its record.
 
+use std::collections::BTreeMap;
 use std::path::{Path, PathBuf};
 
 use clap::Args;
@@ -8,7 +9,7 @@ use super::check::{findings_of, print_findings};
 use crate::cli::environment::{Environment, ScreenArgs, look};
 use crate::cli::exit::Exit;
 use crate::cli::output::Output;
-use crate::diagnostic::{Severity, count};
+use crate::diagnostic::{Finding, Severity, count};
 use crate::shell::beginning::{DayError, Ground};
 use crate::shell::brief::{self, BriefError, Left};
 use crate::shell::job_folder;
@@ -43,9 +44,7 @@ pub fn run(args: &BriefArgs, environment: &Environment, output: &mut Output<'_>)
         return Exit::No;
     };
     // Stop findings about one tree keep that tree from being begun; others keep the day from it.
-    let of_the_day = |f: &&crate::diagnostic::Finding| {
-        f.severity == Severity::Stop && !f.path.starts_with("trees[")
-    };
+    let of_the_day = |f: &&Finding| f.severity == Severity::Stop && !f.path.starts_with("trees[");
     let day_stops: Vec<_> = findings.iter().filter(of_the_day).cloned().collect();
     if count(&day_stops).stop > 0 {
         print_findings(&file.source, &day_stops, output);
@@ -58,7 +57,8 @@ pub fn run(args: &BriefArgs, environment: &Environment, output: &mut Output<'_>)
         output.talk("stumpside: brief needs a terminal; `stumpside check` and `stumpside sizeup` print without one");
         return Exit::Usage;
     }
-    let ground = match ground(args, plan, &file) {
+    let stops = stops_of_trees(&plan, &findings);
+    let ground = match ground(args, (plan, stops), &file) {
         Ok(ground) => ground,
         Err(error) => return explain(&error, output),
     };
@@ -85,9 +85,30 @@ pub fn run(args: &BriefArgs, environment: &Environment, output: &mut Output<'_>)
     }
 }
 
+/// The codes of stop findings by the tree they are about. What the size-ups find is found anew with
+/// every card.
+fn stops_of_trees(plan: &crate::plan::Plan, findings: &[Finding]) -> BTreeMap<String, Vec<String>> {
+    let mut stops: BTreeMap<String, Vec<String>> = BTreeMap::new();
+    for finding in findings
+        .iter()
+        .filter(|f| f.severity == Severity::Stop && !f.code.starts_with("TREE"))
+    {
+        let about = |t: &&crate::plan::Tree| {
+            finding.path == t.route || finding.path.starts_with(&format!("{}.", t.route))
+        };
+        if let Some(tree) = plan.trees.iter().find(about) {
+            stops
+                .entry(tree.id.value.clone())
+                .or_default()
+                .push(finding.code.to_owned());
+        }
+    }
+    stops
+}
+
 fn ground(
     args: &BriefArgs,
-    plan: crate::plan::Plan,
+    (plan, stops): (crate::plan::Plan, BTreeMap<String, Vec<String>>),
     file: &job_folder::PlanFile,
 ) -> Result<Ground, DayError> {
     let parts = job_folder::read_parts(&plan, &file.path)?;
@@ -104,6 +125,7 @@ fn ground(
         plan_bytes,
         plan_path: file.path.clone(),
         parts,
+        stops,
         crew,
         places,
     })
