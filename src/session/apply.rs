@@ -332,9 +332,16 @@ fn ask_hold_line_again(next: &mut Session) {
     }
 }
 
-/// A program that was killed within a stretch cannot know what the tree did: the stretch stays
-/// open until somebody says. A held answer is gone with the memory that held it.
-fn reopened(_next: &mut Session) {}
+/// After a restart the hold line is asked again. Within a stretch nobody but the tree can say what
+/// happened meanwhile: it stays open until somebody says.
+fn reopened(next: &mut Session) {
+    if next.stretch.is_none() {
+        ask_hold_line_again(next);
+        if next.stage == Stage::Cuts {
+            advance(next);
+        }
+    }
+}
 
 fn stretch_end(next: &mut Session, recorded: &Recorded) {
     let Fact::StretchEnd {

@@ -97,7 +97,7 @@ fn hold_line_was_held(facts: &[Recorded]) {
             continue;
         };
         let voids = |r: &Recorded| match &r.fact {
-            Fact::Stop { .. } | Fact::Resumed | Fact::TalkAgain { .. } => true,
+            Fact::Stop { .. } | Fact::Resumed | Fact::TalkAgain { .. } | Fact::Reopened => true,
             Fact::SizedUp { changes, .. } => !changes.is_empty(),
             _ => false,
         };
@@ -366,5 +366,25 @@ fn a_tree_whose_sawyer_is_absent_is_not_begun() {
             .unwrap()
             .1
             .contains("Tamsin Okoro is not here")
+    );
+}
+
+#[test]
+fn after_a_restart_the_hold_line_is_asked_again() {
+    let mut bench = Bench::new();
+    while bench.session.lit().unwrap().id != "step.back-cut" {
+        bench.answer(0);
+    }
+    assert!(bench.session.hold_line_passed());
+    bench.reopen();
+    assert_eq!(bench.session.stage, Stage::HoldLine);
+    assert_eq!(bench.session.lit().unwrap().id, "count");
+    while bench.session.stretch.is_none() {
+        bench.answer(0);
+    }
+    bench.reopen();
+    assert!(
+        bench.session.stretch.is_some(),
+        "only the tree ends a stretch"
     );
 }

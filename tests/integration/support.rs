@@ -206,6 +206,16 @@ impl Bench {
         }
     }
 
+    /// The program killed and opened again.
+    pub(crate) fn reopen(&mut self) {
+        self.desk = Desk::default();
+        self.record(vec![Fact::Reopened]);
+        if let Some(held) = self.session.held.clone() {
+            self.record(vec![Fact::LookLost { item: held.item }]);
+        }
+        self.desk.follow(&self.session);
+    }
+
     /// An act, as the shell would carry it out.
     pub(crate) fn act(&mut self, mut act: Act) {
         if let Act::Confirm { nonce, .. } = &mut act {
