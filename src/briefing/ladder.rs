@@ -31,6 +31,32 @@ fn item(id: String, name: String, call: String, asked_of: &str) -> Item {
     }
 }
 
+/// What is left to do at a tree that may not be cut as it stands: leave it, its ring guarded.
+pub fn held_back(job: &Job, tree: &JobTree, why: &str) -> Item {
+    let leave = Option_ {
+        leaves: true,
+        ..Option_::plain("we leave it, ring guarded")
+    };
+    let call = format!("{why} Stop, talk, or take back what was measured wrong.");
+    Item {
+        number: 1,
+        form: Form::Choose(vec![leave]),
+        kind: Kind::LeftStanding,
+        signs: Signs::Keyer,
+        caution: Some((
+            "WARNING".to_owned(),
+            "A cut tree left standing can fall on anyone near. Guard its ring and tell everyone."
+                .to_owned(),
+        )),
+        ..item(
+            format!("held-back.{}", tree.id),
+            "Not to be cut".to_owned(),
+            call,
+            &job.leader,
+        )
+    }
+}
+
 /// Who is here, person by person.
 pub fn roll_call(job: &Job) -> Vec<Item> {
     job.people
@@ -251,8 +277,10 @@ fn signature(id: String, name: String, person: &str, sentence: &str) -> Item {
 
 /// Which tree is next. `open` are the trees that may be begun; the others say why not.
 pub fn choose(job: &Job, open: &[(String, Option<String>)]) -> Vec<Item> {
-    let mut options: Vec<Option_> = open
-        .iter()
+    let (begin, wait): (Vec<_>, Vec<_>) = open.iter().partition(|(_, held)| held.is_none());
+    let mut options: Vec<Option_> = begin
+        .into_iter()
+        .chain(wait)
         .take(8)
         .map(|(id, held)| {
             let species = job.tree(id).map_or("", |t| t.species.as_str());

@@ -11,6 +11,7 @@ pub use card::{Card, Figure, Removed, Rung, StumpCard, UnitWord, rung_of};
 pub use item::{AskedValue, Field, Form, Item, Kind, Option_, Signs};
 pub use job::{Job, JobPerson, JobTree, Tolerance};
 pub use ladder::{
-    choose, closing, cuts, hold_line, list, own_hazards, questions, roll_call, signing, talk_again,
+    choose, closing, cuts, held_back, hold_line, list, own_hazards, questions, roll_call, signing,
+    talk_again,
 };
 pub use size_up::size_up;

@@ -17,6 +17,35 @@ pub fn size_up(plan: &Plan, tree: &str, (measured, parts): (&[(What, i64)], &Par
     let Some(tree) = plan.trees.iter().find(|t| t.id.value == tree) else {
         return nothing();
     };
+    // A hinge has two ends: the thin one holds less, the thick one splits sooner. Both are sized up
+    // and the more guarded card goes on.
+    let hinges: Vec<i64> = measured
+        .iter()
+        .filter(|(w, _)| *w == What::Hinge)
+        .map(|(_, v)| *v)
+        .collect();
+    if let [first, second] = hinges.as_slice() {
+        let with = |hinge: i64| -> Vec<(What, i64)> {
+            let others = measured.iter().filter(|(w, _)| *w != What::Hinge).copied();
+            others.chain([(What::Hinge, hinge)]).collect()
+        };
+        let cards = [with(*first), with(*second)].map(|m| of_tree(plan, tree, (&m, parts)));
+        let [a, b] = cards;
+        return if guarded(&b) > guarded(&a) { b } else { a };
+    }
+    of_tree(plan, tree, (measured, parts))
+}
+
+/// How guarded a card is: none proposed, then stops, then the lower worst credible ratio.
+fn guarded(card: &Card) -> (bool, bool, i64) {
+    (
+        card.method.is_none(),
+        !card.stops.is_empty(),
+        card.worst_ppm.map_or(0, |ppm| -ppm),
+    )
+}
+
+fn of_tree(plan: &Plan, tree: &Tree, (measured, parts): (&[(What, i64)], &Parts)) -> Card {
     let since: Vec<Since> = measured
         .iter()
         .filter_map(|(what, value)| since(*what, *value))
@@ -93,6 +122,12 @@ fn card(tree: &Tree, sized: &SizedTree, parts: &Parts) -> Card {
     };
     if let (Choice::Proposed(method), true) = (size_up.choice, sized.may_be_cut()) {
         card.method = Some(method.word().to_owned());
+        if sized.by_hand {
+            // The cases are those of the program's own cuts; of the author's they say nothing.
+            card.method = Some("steps written by hand".to_owned());
+            card.state = "cannot-say".to_owned();
+            card.worst_ppm = None;
+        }
         rungs(&mut card, &sized.steps, parts);
     }
     card
@@ -239,18 +274,20 @@ fn add_angle(all: &mut Vec<Figure>, name: &str, band: Option<Band<Angle>>) {
 }
 
 /// The rungs, each id once. What the hold line, the walk-up or a cut's own answer asks already is
-/// no rung of its own: a stage has at most nine. The hold line stands before the first cut that
-/// opens the rear, or, with a slot open, where the method sets it.
+/// no rung of its own: a stage has at most nine. The hold line stands before the committing cut:
+/// the release where a slot is opened, the first cut that opens the rear otherwise, whatever the
+/// author's own hold says.
 fn rungs(card: &mut Card, steps: &[Step], parts: &Parts) {
     let stump = card.stump;
     let plunged = steps
         .iter()
         .any(|s| matches!(s.act, StepAct::Cut(Cut::Plunge { .. })));
-    let mut held = false;
     let mut committed = false;
     for step in steps {
-        held |= matches!(step.act, StepAct::Hold { .. });
-        held |= !plunged && opens_the_rear(step);
+        let commits = match &step.act {
+            StepAct::Cut(Cut::StrapRelease) => true,
+            _ => !plunged && opens_the_rear(step),
+        };
         if asked_elsewhere(step) {
             continue;
         }
@@ -264,7 +301,7 @@ fn rungs(card: &mut Card, steps: &[Step], parts: &Parts) {
         if same > 0 {
             rung.id = format!("{}-{}", rung.word, same + 1);
         }
-        rung.commits = held && !committed;
+        rung.commits = commits && !committed;
         committed |= rung.commits;
         card.rungs.push(rung);
     }

@@ -344,6 +344,7 @@ pub fn fact(line: &ParsedLine) -> Option<Recorded> {
         stamp: Stamp {
             utc_ms: stamp.utc_ms,
             up_ms: stamp.up_ms,
+            boot: stamp.boot.0,
         },
         fact,
     })
@@ -408,7 +409,7 @@ fn read(kind: &str, m: &Members) -> Option<Fact> {
             } else {
                 StretchEnd::OnStump
             },
-            lasted_ms: whole("took_ms")?,
+            lasted_ms: whole("took_ms"),
             said: said_in(m)?,
         },
         "hand_over" => Fact::HandOver { to: text("to")? },

@@ -246,9 +246,8 @@ fn revealed(next: &mut Session, recorded: &Recorded) {
         return;
     }
     next.kept_open = None;
-    // Of two answers that agree, the one further from the plan goes on: the guarded side.
-    let from_plan = |value: i64| planned.map_or(0, |p| (value - p).abs());
-    let further = if from_plan(second.value) > from_plan(first.value) {
+    // Of two answers that agree, the greater goes on: of a lean and of a count the guarded side.
+    let further = if second.value > first.value {
         second
     } else {
         first
@@ -316,12 +315,16 @@ fn resume(next: &mut Session) {
 fn talk(next: &mut Session, changes: Vec<Change>, seq: u64) {
     let from = match (&next.talk, next.stage) {
         (Some(talk), Stage::TalkAgain) => talk.from,
+        // The line stands before the committing cut of whatever is cut now.
+        (_, Stage::HoldLine) => Stage::Cuts,
         (_, stage) => stage,
     };
     ask_hold_line_again(next);
     next.held = None;
     next.talk = Some(Talk { from, changes, seq });
     next.stage = Stage::TalkAgain;
+    // Before anybody answered the roll there is nobody to sign again.
+    advance(next);
 }
 
 fn ask_hold_line_again(next: &mut Session) {
@@ -355,7 +358,7 @@ fn stretch_end(next: &mut Session, recorded: &Recorded) {
         return;
     };
     next.stretch = None;
-    next.stretch_lasted_ms = Some(*lasted_ms);
+    next.stretch_lasted_ms = *lasted_ms;
     next.done.push(Done {
         seq: recorded.seq,
         stage: Stage::Cuts,
@@ -380,6 +383,11 @@ fn advance(next: &mut Session) {
     if next.size_up_due.is_some() {
         return;
     }
+    let working = matches!(next.stage, Stage::WalkUp | Stage::Cuts | Stage::HoldLine);
+    if working && next.stretch.is_none() && next.held_back().is_some() {
+        // Nothing may be cut as it stands: the ladder asks to leave it or to measure again.
+        return;
+    }
     let lit = next.lit();
     if next.stage == Stage::Cuts
         && lit.as_ref().is_some_and(|i| commits(next, &i.id))
@@ -402,10 +410,22 @@ fn advance(next: &mut Session) {
             advance(next);
         }
         Stage::HoldLine => next.stage = Stage::Cuts,
-        Stage::Cuts => next.stage = Stage::AllClear,
+        // Only the tree ends the cuts: down, or on the stump with no rung left.
+        Stage::Cuts => {
+            if next.committed() {
+                next.stage = Stage::AllClear;
+            }
+        }
         Stage::AllClear => {
             if let Some(tree) = next.tree.clone() {
-                next.ends.insert(tree, TreeEnd::AllClear(outcome(next)));
+                let outcome = outcome(next);
+                let down = DOWN.contains(&outcome.as_str());
+                let end = if down {
+                    TreeEnd::AllClear(outcome)
+                } else {
+                    TreeEnd::Standing(outcome)
+                };
+                next.ends.insert(tree, end);
             }
             to_choose(next);
         }
@@ -434,6 +454,9 @@ fn commits(next: &Session, item: &str) -> bool {
     }
     false
 }
+
+/// The outcomes after which a tree is down; after any other it still hangs or stands.
+const DOWN: [&str; 2] = ["down in its lay", "down beside its lay"];
 
 fn to_choose(next: &mut Session) {
     next.stage = Stage::Choose;

@@ -198,7 +198,8 @@ fn in_stretch(session: &Session, act: &Act, now: &Stamp) -> Result<Vec<Fact>, Re
         keyed_by: session.keyer.clone(),
         heard: Heard::Voice,
     };
-    let lasted_ms = (now.up_ms - stretch.start.up_ms).max(0);
+    let same_boot = now.boot == stretch.start.boot;
+    let lasted_ms = same_boot.then(|| (now.up_ms - stretch.start.up_ms).max(0));
     Ok(vec![Fact::StretchEnd {
         tree: tree.clone(),
         item: stretch.item.clone(),
@@ -272,7 +273,9 @@ fn answer(
     (values, option): (Vec<Value>, Option<Option_>),
 ) -> Answer {
     let leaves = option.as_ref().is_some_and(|o| o.leaves);
+    let holds = option.as_ref().is_some_and(|o| o.holds.is_some());
     let signer = match item.signs {
+        _ if holds => None,
         Signs::Nobody if leaves => Some(session.keyer.clone()),
         Signs::Nobody => None,
         Signs::Asked => Some(item.asked_of.clone()),
@@ -284,11 +287,7 @@ fn answer(
         .filter(|s| !has_key(s))
         .map(|_| session.job.leader.clone());
     Answer {
-        kind: if leaves {
-            Kind::LeftStanding
-        } else {
-            item.kind
-        },
+        kind: kind_said(item, option.as_ref()),
         stage: session.stage,
         tree: session
             .tree
@@ -297,13 +296,28 @@ fn answer(
         item: item.id.clone(),
         number: item.number,
         shown: shown(item),
-        sentence: item.sentence.clone(),
+        sentence: item.sentence.clone().filter(|_| !holds),
         values,
         holds: option.as_ref().and_then(|o| o.holds.clone()),
         talk_again: option.is_some_and(|o| o.talk_again),
         said,
         signer: signer.filter(has_key),
         named_by,
+    }
+}
+
+/// What an answer is on the record: one that keeps the item open is no go, no all clear and no
+/// sign-off.
+fn kind_said(item: &Item, option: Option<&Option_>) -> Kind {
+    match (item.kind, option) {
+        (_, Some(option)) if option.leaves => Kind::LeftStanding,
+        (Kind::Go, Some(option)) if option.holds.is_some() => Kind::HoldItem,
+        (Kind::AllClear | Kind::TreeChosen | Kind::StepDone, Some(option))
+            if option.holds.is_some() =>
+        {
+            Kind::Checked
+        }
+        (kind, _) => kind,
     }
 }
 

@@ -11,6 +11,8 @@ pub struct Stamp {
     pub utc_ms: i64,
     /// Milliseconds since boot, sleep included.
     pub up_ms: i64,
+    /// Which start of the machine; clocks since boot mean nothing across two.
+    pub boot: [u8; 4],
 }
 
 /// How an answer was heard.
@@ -271,8 +273,9 @@ pub enum Fact {
         item: String,
         /// How.
         how: StretchEnd,
-        /// Milliseconds from its start, by the boot-time clock.
-        lasted_ms: i64,
+        /// Milliseconds from its start, by the boot-time clock; not known after another start of
+        /// the machine.
+        lasted_ms: Option<i64>,
         /// Who.
         said: Said,
     },

@@ -87,6 +87,8 @@ pub enum TreeEnd {
     AllClear(String),
     /// Left standing with cuts in it.
     LeftStanding,
+    /// Lodged, set back or split: worked on, and not down.
+    Standing(String),
 }
 
 /// The state.
@@ -189,6 +191,11 @@ impl Session {
         items
     }
 
+    /// Every item of the present stage, on whatever page.
+    pub fn every_item(&self) -> Vec<Item> {
+        self.unpaged(&self.people_present())
+    }
+
     fn unpaged(&self, present: &[String]) -> Vec<Item> {
         let job = &self.job;
         let tree = self.tree.as_deref().and_then(|id| job.tree(id));
@@ -207,6 +214,13 @@ impl Session {
                 tree.map_or(vec![], |t| {
                     briefing::list(job, present, (&job.parts.stopped, t, caller))
                 })
+            }
+            (Stage::WalkUp | Stage::Cuts | Stage::HoldLine, Some(tree)) if self.blocked() => {
+                vec![briefing::held_back(
+                    job,
+                    tree,
+                    &self.held_back().unwrap_or_default(),
+                )]
             }
             (Stage::ShortTalk, Some(tree)) => {
                 briefing::list(job, present, (&job.parts.short_talk, tree, None))
@@ -237,7 +251,11 @@ impl Session {
                 .iter()
                 .find(|id| !matches!(self.ends.get(*id), Some(TreeEnd::AllClear(_))));
             if let Some(first) = first {
-                return Some(format!("{first} must be down first."));
+                return Some(match self.ends.get(first) {
+                    Some(TreeEnd::Standing(how)) => format!("{first} is not down: {how}."),
+                    Some(TreeEnd::LeftStanding) => format!("{first} was left standing."),
+                    Some(TreeEnd::AllClear(_)) | None => format!("{first} must be down first."),
+                });
             }
             let here = |id: &String| self.present.get(id).copied().unwrap_or(false);
             if let Some(sawyer) = tree.sawyer.as_ref().filter(|id| !here(id)) {
@@ -331,6 +349,34 @@ impl Session {
         briefing::hold_line(&self.job, &present, tree)
             .iter()
             .all(|i| standing(&i.id))
+    }
+
+    /// Why nothing may be cut at the tree at hand as it stands now.
+    pub fn held_back(&self) -> Option<String> {
+        let card = self.card()?;
+        if card.method.is_none() {
+            let why = card
+                .refused
+                .first()
+                .map_or("no method is proposed", String::as_str);
+            return Some(format!("Not with a chainsaw alone as it stands: {why}"));
+        }
+        let stops = card.stops.join(", ");
+        (!stops.is_empty()).then(|| format!("Stop findings stand against it: {stops}"))
+    }
+
+    /// Whether the ladder gives way to what holds the tree back.
+    fn blocked(&self) -> bool {
+        self.stretch.is_none()
+            && !self.committed()
+            && self.size_up_due.is_none()
+            && self.held_back().is_some()
+    }
+
+    /// Whether a committing cut was begun at the tree at hand: from then on only the tree decides.
+    pub fn committed(&self) -> bool {
+        let of_tree = |d: &Done| d.stands && d.stage == Stage::Cuts && d.tree == self.tree;
+        self.done.iter().any(|d| of_tree(d) && d.shown.is_empty())
     }
 
     /// The card of the tree at hand.

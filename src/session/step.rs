@@ -119,23 +119,22 @@ fn measured(session: &Session, tree: &str) -> Vec<(What, i64)> {
         .iter()
         .filter(|d| d.stands && d.tree.as_deref() == Some(tree));
     for done in standing {
-        // Of two ends of one thing the thinner counts for a hinge or strap, as everywhere the
-        // guarded side.
-        let mut of_item: Vec<(What, i64)> = vec![];
+        // Of two ends of one thing the lesser counts, as everywhere the guarded side; of a hinge
+        // both do.
+        let mut of_item: Vec<(What, Vec<i64>)> = vec![];
         for value in &done.values {
             let Value::Measured { what, value, .. } = value else {
                 continue;
             };
             match of_item.iter_mut().find(|(w, _)| w == what) {
-                Some((_, least)) => *least = (*least).min(*value),
-                None => of_item.push((*what, *value)),
+                Some((What::Hinge, ends)) => ends.push(*value),
+                Some((_, ends)) => ends[0] = ends[0].min(*value),
+                None => of_item.push((*what, vec![*value])),
             }
         }
-        for (what, value) in of_item {
-            match all.iter_mut().find(|(w, _)| *w == what) {
-                Some((_, old)) => *old = value,
-                None => all.push((what, value)),
-            }
+        for (what, ends) in of_item {
+            all.retain(|(w, _)| *w != what);
+            all.extend(ends.into_iter().map(|value| (what, value)));
         }
     }
     all
@@ -176,7 +175,7 @@ fn past_tolerance(session: &Session) -> Vec<Change> {
     let Some(last) = session.done_here().last().copied().cloned() else {
         return vec![];
     };
-    let items = session.items();
+    let items = session.every_item();
     let item = items.iter().find(|i| i.id == last.item);
     let tolerance = |label: &str| {
         item.and_then(|i| match &i.form {
@@ -208,7 +207,7 @@ fn past_tolerance(session: &Session) -> Vec<Change> {
         {
             changes.push(Change {
                 what: "wind over the plan's limit".to_owned(),
-                old: format!("{limit} mm/s"),
+                old: in_words(*what, limit),
                 new: typed.clone(),
             });
         }
@@ -217,10 +216,27 @@ fn past_tolerance(session: &Session) -> Vec<Change> {
         {
             changes.push(Change {
                 what: label.clone(),
-                old: format!("{planned}"),
+                old: in_words(*what, *planned),
                 new: typed.clone(),
             });
         }
     }
     changes
+}
+
+/// A value of the record with its unit, for what the crew reads and signs.
+fn in_words(what: What, value: i64) -> String {
+    match what {
+        What::Count => format!("{value} people"),
+        What::Lean => format!("{} deg", value / 1_000),
+        What::Wind => format!("{} km/h", (value * 36 + 5_000) / 10_000),
+        What::Stump
+        | What::Hinge
+        | What::FaceDepth
+        | What::Strap
+        | What::BackCutHeight
+        | What::Bypass
+        | What::BehindHinge
+        | What::BackCutDepth => format!("{} mm", value / 1_000),
+    }
 }

@@ -49,6 +49,11 @@ pub enum DayError {
         /// Begin of this plan's hash.
         here: String,
     },
+    /// The texts, rules or keys are not those the record began with.
+    #[error(
+        "the {0} are not those this record began with; go on with the program, parts folder and keys it began with, or give the plan a folder of its own"
+    )]
+    OtherGround(&'static str),
     /// An entry that the program should know does not read.
     #[error(
         "entry {seq} ({kind}) does not read as this program writes it; the record is left as it is"
@@ -154,6 +159,15 @@ pub(super) fn resumed(
             recorded: short(&roster.plan_sha256),
             here: short(&opening.plan_sha256()),
         });
+    }
+    let now = opening.members();
+    for (member, words) in [("parts", "texts and rules"), ("crew", "crew and its keys")] {
+        if lines
+            .first()
+            .is_some_and(|first| first.members.get(member) != now.get(member))
+        {
+            return Err(DayError::OtherGround(words));
+        }
     }
     let void = cut_off(lines);
     let mut all = vec![];

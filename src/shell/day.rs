@@ -141,13 +141,7 @@ impl Day {
     /// Now, for drawing.
     pub fn now(&self) -> (Stamp, i32) {
         let now = self.clock.now();
-        (
-            Stamp {
-                utc_ms: now.utc_ms,
-                up_ms: now.up_ms,
-            },
-            now.off_min,
-        )
+        (short(&now), now.off_min)
     }
 
     /// Whether anybody's key is one for demonstrations.
@@ -258,10 +252,7 @@ impl Day {
         let now = self.clock.now();
         let event = Event::Act {
             act: act.clone(),
-            now: Stamp {
-                utc_ms: now.utc_ms,
-                up_ms: now.up_ms,
-            },
+            now: short(&now),
         };
         let effects = match step(&self.session, &event) {
             Ok(step) => step.effects,
@@ -383,6 +374,16 @@ impl Day {
             Err(RecordError::NotRecorded { seq, source }) => {
                 self.desk.recording = false;
                 self.not_recorded(seq, &source);
+                // What the state itself asks for is done all the same, in the new file.
+                Ok(if self.on_paper {
+                    vec![]
+                } else {
+                    outstanding(&self.session)
+                })
+            }
+            Err(error @ (RecordError::NearlyFull | RecordError::Draft(_))) => {
+                self.desk.recording = false;
+                self.desk.say(format!("NOT RECORDED: {error}"));
                 Ok(vec![])
             }
             Err(error) => Err(error.into()),
@@ -423,10 +424,7 @@ impl Day {
             self.code_seq = last.last_seq();
         }
         self.last_stamp = stamp;
-        let at = Stamp {
-            utc_ms: stamp.utc_ms,
-            up_ms: stamp.up_ms,
-        };
+        let at = short(&stamp);
         // The state is folded from the entry as it stands on disk, so that live equals replayed.
         let place = |(fact, written): (Fact, &Written)| {
             facts::fact(&written.entry).unwrap_or(Recorded {
@@ -462,5 +460,14 @@ impl Day {
             members.insert("moved_ms".into(), moved.into());
             Draft::unsigned("clock_step", members)
         })
+    }
+}
+
+/// The session's part of a stamp.
+const fn short(stamp: &FullStamp) -> Stamp {
+    Stamp {
+        utc_ms: stamp.utc_ms,
+        up_ms: stamp.up_ms,
+        boot: stamp.boot.0,
     }
 }

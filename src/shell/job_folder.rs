@@ -44,20 +44,6 @@ pub struct PlanFile {
     pub loaded: Loaded,
 }
 
-/// Reads a plan.
-///
-/// # Errors
-/// [`FolderError`] where the file cannot be read or is no text.
-pub fn read_plan(path: &Path) -> Result<PlanFile, FolderError> {
-    let text = files::read_text(path, LIMIT_BYTES)?;
-    let loaded = crate::plan::load(&text);
-    Ok(PlanFile {
-        path: path.to_owned(),
-        source: SourceText::new(path.display().to_string(), text),
-        loaded,
-    })
-}
-
 /// The parts of a plan: the built-in ones, with those of its override folder in their place.
 ///
 /// # Errors

@@ -307,8 +307,12 @@ impl Desk {
             Key::Paste(text) => drop(self.area.insert_str(text)),
         }
         const MOST: usize = 2_000;
-        if self.words().chars().count() > MOST {
-            self.area.delete_char();
+        let words = self.words();
+        if words.chars().count() > MOST {
+            let kept: String = words.chars().take(MOST).collect();
+            self.area = TextArea::from(kept.lines());
+            self.area.move_cursor(tui_textarea::CursorMove::Bottom);
+            self.area.move_cursor(tui_textarea::CursorMove::End);
             self.say("two thousand letters are the most");
         }
     }

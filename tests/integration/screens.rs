@@ -17,6 +17,7 @@ fn paint(bench: &Bench, (width, height): (u16, u16), look: Look) -> Buffer {
     let now = Stamp {
         utc_ms: 1_700_000_100_000,
         up_ms: 100_000,
+        boot: [1; 4],
     };
     let view = View {
         session: &bench.session,

@@ -1,13 +1,14 @@
 //! The day's work: whole days pressed key by key, and properties over random keys.
 
 use proptest::prelude::*;
-use stumpside::briefing::Kind;
+use stumpside::briefing::{Form, Kind};
+use stumpside::parts::What;
 use stumpside::record::line::{self, Boot, Place};
 use stumpside::record::{Stamp as FullStamp, facts};
-use stumpside::session::{Answer, Fact, Recorded, Session, Stage, replay};
+use stumpside::session::{Answer, Fact, Recorded, Session, Stage, TreeEnd, replay};
 use stumpside::tui::Key;
 
-use crate::support::{Bench, demo_job, tries};
+use crate::support::{Bench, card, demo_job, tries};
 
 /// Answers every question with its first answer until the day is closed.
 fn whole_day(bench: &mut Bench) {
@@ -386,5 +387,129 @@ fn after_a_restart_the_hold_line_is_asked_again() {
     assert!(
         bench.session.stretch.is_some(),
         "only the tree ends a stretch"
+    );
+}
+
+#[test]
+fn a_tree_refused_at_work_is_left_never_cut_and_never_down() {
+    let mut bench = Bench::new();
+    while bench.session.lit().unwrap().id != "step.face-floor" {
+        bench.answer(0);
+    }
+    let mut card = bench.session.cards["T1"].clone();
+    card.method = None;
+    card.rungs.clear();
+    card.refused = vec!["the stem is hollow".to_owned()];
+    bench.size_up_as("T1", card);
+    while bench.session.stage == Stage::TalkAgain {
+        bench.answer(0);
+    }
+    assert_eq!(bench.session.stage, Stage::Cuts);
+    let item = bench.session.lit().unwrap();
+    assert!(item.id.starts_with("held-back") && item.call.contains("the stem is hollow"));
+    bench.answer(0);
+    assert_eq!(bench.session.ends["T1"], TreeEnd::LeftStanding);
+    // What waits for it is kept back.
+    let choices = match bench.session.lit().unwrap().form {
+        Form::Choose(options) => options,
+        other => panic!("{other:?}"),
+    };
+    let second = choices
+        .iter()
+        .find(|o| o.stands_for.as_deref() == Some("T2"))
+        .unwrap();
+    assert_eq!(second.holds.as_deref(), Some("T1 was left standing."));
+}
+
+#[test]
+fn a_lodged_tree_is_not_down_for_the_next() {
+    let mut bench = Bench::new();
+    while bench.session.lit().is_none_or(|i| i.id != "outcome") {
+        bench.answer(if bench.session.stretch.is_some() {
+            1
+        } else {
+            0
+        });
+    }
+    bench.keys("3\n2\n");
+    while bench.session.stage == Stage::AllClear {
+        bench.answer(0);
+    }
+    assert_eq!(
+        bench.session.ends["T1"],
+        TreeEnd::Standing("lodged".to_owned())
+    );
+    let Form::Choose(options) = bench.session.lit().unwrap().form else {
+        panic!("a choice")
+    };
+    let second = options
+        .iter()
+        .find(|o| o.stands_for.as_deref() == Some("T2"))
+        .unwrap();
+    assert_eq!(second.holds.as_deref(), Some("T1 is not down: lodged."));
+}
+
+#[test]
+fn a_method_changed_at_the_hold_line_moves_the_line_to_its_own_committing_cut() {
+    let mut bench = Bench::new();
+    while bench.session.stage != Stage::HoldLine {
+        bench.answer(0);
+    }
+    bench.size_up_as("T1", card("plunge-with-strap"));
+    while bench.session.stage == Stage::TalkAgain {
+        bench.answer(0);
+    }
+    assert_eq!(bench.session.stage, Stage::Cuts);
+    while bench.session.stage == Stage::Cuts {
+        assert_ne!(bench.session.lit().unwrap().id, "step.strap-release");
+        bench.answer(0);
+    }
+    assert_eq!(bench.session.stage, Stage::HoldLine);
+}
+
+#[test]
+fn not_now_is_no_go_and_is_not_signed() {
+    let mut bench = Bench::new();
+    while bench.session.lit().unwrap().id != "go-leader" {
+        bench.answer(0);
+    }
+    bench.keys("2\n7\n");
+    let last = bench
+        .facts
+        .last()
+        .map(|r| answer_of(r).unwrap().clone())
+        .unwrap();
+    assert_eq!(
+        (last.kind, last.sentence, last.signer),
+        (Kind::HoldItem, None, None)
+    );
+    assert_eq!(bench.session.lit().unwrap().id, "go-leader");
+}
+
+#[test]
+fn a_stop_before_the_roll_call_does_not_lock_the_day() {
+    let mut bench = Bench::new();
+    bench.keys(" ");
+    bench.answer(0);
+    bench.answer(0);
+    bench.keys("3\n3\n");
+    bench.answer(2);
+    bench.answer(0);
+    assert_eq!(bench.session.stage, Stage::RollCall);
+    assert!(bench.session.lit().is_some());
+}
+
+#[test]
+fn both_ends_of_a_hinge_reach_the_size_up() {
+    let plan = crate::support::demo_plan();
+    let parts = stumpside::parts::Parts::built_in();
+    let of = |hinges: &[i64]| {
+        let measured: Vec<_> = hinges.iter().map(|um| (What::Hinge, *um)).collect();
+        stumpside::briefing::size_up(&plan, "T3", (&measured, &parts))
+    };
+    let (thin, thick) = (of(&[54_000, 54_000]), of(&[60_000, 60_000]));
+    assert_eq!(
+        of(&[54_000, 60_000]).worst_ppm,
+        thick.worst_ppm.min(thin.worst_ppm)
     );
 }

@@ -162,6 +162,7 @@ impl Bench {
         Stamp {
             utc_ms: 1_700_000_000_000 + self.now_ms,
             up_ms: self.now_ms,
+            boot: [1; 4],
         }
     }
 
@@ -212,6 +213,19 @@ impl Bench {
         self.record(vec![Fact::Reopened]);
         if let Some(held) = self.session.held.clone() {
             self.record(vec![Fact::LookLost { item: held.item }]);
+        }
+        self.desk.follow(&self.session);
+    }
+
+    /// A tree sized up with another card, as after a measured value.
+    pub(crate) fn size_up_as(&mut self, tree: &str, card: Card) {
+        let event = Event::SizedUp {
+            tree: tree.to_owned(),
+            card: Box::new(card),
+            because: "measured".to_owned(),
+        };
+        for effect in step(&self.session, &event).unwrap().effects {
+            self.carry_out(effect);
         }
         self.desk.follow(&self.session);
     }

@@ -5,7 +5,7 @@ use std::path::{Path, PathBuf};
 
 use clap::Args;
 
-use super::check::{findings_of, print_findings};
+use super::check::{self, findings_of, print_findings};
 use crate::cli::environment::{Environment, ScreenArgs, look};
 use crate::cli::exit::Exit;
 use crate::cli::output::Output;
@@ -30,7 +30,7 @@ pub struct BriefArgs {
 
 /// Runs it.
 pub fn run(args: &BriefArgs, environment: &Environment, output: &mut Output<'_>) -> Exit {
-    let file = match job_folder::read_plan(&args.plan) {
+    let file = match check::read(&args.plan) {
         Ok(file) => file,
         Err(error) => {
             output.talk(&format!("stumpside: {error}"));
@@ -135,7 +135,9 @@ fn ground(
 fn explain(error: &DayError, output: &mut Output<'_>) -> Exit {
     output.talk(&format!("stumpside: {error}"));
     match error {
-        DayError::AnotherPlan { .. } | DayError::LeaderWithoutKey(_) => Exit::No,
+        DayError::AnotherPlan { .. } | DayError::OtherGround(_) | DayError::LeaderWithoutKey(_) => {
+            Exit::No
+        }
         DayError::Record(RecordError::Closed) => {
             output.talk("the day of this record is closed; see `stumpside record verify`");
             Exit::No

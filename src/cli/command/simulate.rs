@@ -28,7 +28,7 @@ pub struct SimulateArgs {
     pub format: Format,
 }
 
-/// Runs it. The answer is no where the sequence splits, pinches or sits back.
+/// Runs it. Whatever the verdict, it was asked for: no only where there is nothing to simulate.
 pub fn run(args: &SimulateArgs, output: &mut Output<'_>) -> Exit {
     let (_, plan) = match plan_or_exit(&args.plan, output) {
         Ok(read) => read,

@@ -5,7 +5,7 @@ use std::path::PathBuf;
 use clap::Args;
 use serde_json::{Map, Value as Json, json};
 
-use super::check::{finding_json, findings_of, print_findings};
+use super::check::{self, finding_json, findings_of, print_findings};
 use crate::assessment::{self, SizedTree};
 use crate::cli::exit::Exit;
 use crate::cli::output::{Format, Output};
@@ -13,7 +13,7 @@ use crate::diagnostic::Finding;
 use crate::figures::{CaseState, TreeFigures};
 use crate::method::Choice;
 use crate::plan::{Plan, Tree};
-use crate::shell::job_folder::{self, PlanFile};
+use crate::shell::job_folder::PlanFile;
 use crate::units::{Angle, Band, FromSi};
 
 /// What `sizeup` takes.
@@ -34,7 +34,7 @@ pub(super) fn plan_or_exit(
     path: &std::path::Path,
     output: &mut Output<'_>,
 ) -> Result<(PlanFile, Plan), Exit> {
-    let file = job_folder::read_plan(path).map_err(|error| {
+    let file = check::read(path).map_err(|error| {
         output.talk(&format!("stumpside: {error}"));
         Exit::Unreadable
     })?;
@@ -208,7 +208,7 @@ fn cuts(m: &mut Map<String, Json>, f: Option<&TreeFigures>) {
     let brisk = f.and_then(|f| f.brisk).map_or(Json::Null, |b| {
         json!({
             "stretch_m": band(Some(b.stretch)),
-            "area_m2": b.area.best.value(),
+            "area_m2": band(Some(b.area)),
             "seconds_at_rate": band(b.seconds_at_rate),
             "rate_needed_m2_s": gaps(b.rate_needed),
             "tilt_at_hinge_deg": b.tilt_at_hinge.map_or(Json::Null, tilt),

@@ -52,8 +52,24 @@ const CUTS: &[(&str, Word)] = &[
     ("strap-release", Word::StrapRelease),
 ];
 
+/// At most this many steps at a tree.
+const LIMIT_STEPS: usize = 40;
+
 pub(super) fn steps(reader: &mut Reader, node: &Node, route: &str) -> Vec<Spanned<Step>> {
     let mut steps = vec![];
+    let count = reader.list(node, route).len();
+    if count > LIMIT_STEPS {
+        let message = format!("{count} steps stand here; at most {LIMIT_STEPS} are read");
+        reader.stop(
+            "PLAN-14",
+            (node.place, route),
+            (
+                message,
+                "a crew keeps no more in mind: write the sequence shorter",
+            ),
+        );
+        return steps;
+    }
     for (index, item) in reader.list(node, route).iter().enumerate() {
         let route = format!("{route}[{index}]");
         if let Some(value) = step(reader, item, &route) {

@@ -3,9 +3,11 @@
 use ratatui::layout::Rect;
 
 use super::View;
+use super::gauge;
 use super::header::{cut, footer_words, tree_line};
 use super::paper::Paper;
-use crate::briefing::Form;
+use crate::briefing::{Form, Item, Kind};
+use crate::session::{Session, Stage};
 use crate::tui::{answer, words};
 
 /// Draws it.
@@ -37,6 +39,39 @@ pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>) {
     row += 1;
     row += paper.wrapped(Rect::new(0, row, width, 2), &item.call);
     let room = height.saturating_sub(row + 4);
+    if let Some(who) = second_look(session, &item) {
+        paper.bold(0, row, &cut(&who, usize::from(width)));
+        row += 1;
+    }
+    if let Some(talk) = session
+        .talk
+        .as_ref()
+        .filter(|_| session.stage == Stage::TalkAgain)
+    {
+        let all: Vec<String> = talk
+            .changes
+            .iter()
+            .map(|c| format!("{}: {} -> {}", c.what, c.old, c.new))
+            .collect();
+        row += paper.wrapped_bold(
+            Rect::new(0, row, width, room.saturating_sub(2)),
+            &all.join("; "),
+        );
+    }
+    if item.kind == Kind::Go
+        && let Some(card) = session.card()
+    {
+        for line in gauge::lines(card)
+            .iter()
+            .skip(1)
+            .take(3)
+            .filter(|l| !l.is_empty())
+        {
+            paper.text(0, row, &cut(line, usize::from(width)));
+            row += 1;
+        }
+    }
+    let room = height.saturating_sub(row + 3);
     if let Form::Choose(options) = &item.form {
         let all: Vec<String> = (1..)
             .zip(options)
@@ -76,9 +111,19 @@ pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>) {
     paper.bold(0, height - 3, &cut(line.trim_start(), usize::from(width)));
     let message = match (&session.kept_open, view.desk.recording) {
         (_, true) => "RECORDING".to_owned(),
+        (_, false) if session.size_up_due.is_some() => "SIZING UP AGAIN".to_owned(),
         (Some((_, todo)), false) => todo.clone(),
         (None, false) => view.desk.message.clone(),
     };
     paper.text(0, height - 2, &cut(&message, usize::from(width)));
     paper.text(0, height - 1, &cut(&footer_words(view), usize::from(width)));
+}
+
+/// Whose look is asked, of a value given twice.
+fn second_look(session: &Session, item: &Item) -> Option<String> {
+    let second = item.blind_with.as_ref()?;
+    Some(match &session.held {
+        Some(_) => format!("Second look, blind: {}. HELD.", session.job.name_of(second)),
+        None => format!("First look: {}", session.job.name_of(&item.asked_of)),
+    })
 }

@@ -50,12 +50,23 @@ pub(super) fn tree_line(session: &Session) -> String {
     let Some(tree) = session.tree.as_deref().and_then(|id| job.tree(id)) else {
         return format!("{}, {}", job.name, job.date);
     };
-    let stump = words::length(tree.stump_um, job.units);
+    let measured = |wanted: What| {
+        let here = session
+            .done
+            .iter()
+            .rev()
+            .filter(|d| d.stands && d.tree == session.tree);
+        here.flat_map(|d| &d.values).find_map(|value| match value {
+            Value::Measured { what, value, .. } if *what == wanted => Some(*value),
+            Value::Measured { .. } | Value::Chosen { .. } | Value::Words(_) | Value::Signed => None,
+        })
+    };
+    let stump = words::length(measured(What::Stump).unwrap_or(tree.stump_um), job.units);
     let lean = match (tree.lean_mdeg, tree.lean_toward_mdeg) {
         (Some((angle, _)), Some(toward)) => {
             format!(
                 ", lean {} to {:03}",
-                words::measured(What::Lean, angle, job.units),
+                words::measured(What::Lean, measured(What::Lean).unwrap_or(angle), job.units),
                 words::rounded(toward, 1_000)
             )
         }
@@ -69,7 +80,8 @@ pub(super) fn tree_line(session: &Session) -> String {
 
 /// The last wind read, with its age.
 fn wind_line(view: &View<'_>) -> String {
-    let read = view.session.done.iter().rev().find_map(|done| {
+    let stands = view.session.done.iter().rev().filter(|d| d.stands);
+    let read = stands.into_iter().find_map(|done| {
         done.values.iter().find_map(|value| match value {
             Value::Measured {
                 what: What::Wind,

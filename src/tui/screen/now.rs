@@ -130,6 +130,14 @@ fn measured_facts(session: &Session) -> String {
             | What::BackCutDepth => label.as_str(),
         };
         match facts.iter_mut().find(|(known, _)| known == name) {
+            // Two ends of one thing both count.
+            Some((_, old))
+                if matches!(what, What::Hinge | What::Strap | What::FaceDepth)
+                    && !old.contains('/')
+                    && *old != words =>
+            {
+                *old = format!("{old} / {words}");
+            }
             Some((_, old)) => *old = words,
             None => facts.push((name.to_owned(), words)),
         }

@@ -11,7 +11,12 @@ use crate::tui::words;
 pub(super) fn draw(view: &View<'_>, stretch: &Stretch, paper: &mut Paper<'_>) {
     let (width, height) = paper.size();
     let session = view.session;
-    let seconds = ((view.now.up_ms - stretch.start.up_ms).max(0) / 1_000).min(9_999);
+    let since = if view.now.boot == stretch.start.boot {
+        view.now.up_ms - stretch.start.up_ms
+    } else {
+        view.now.utc_ms - stretch.start.utc_ms
+    };
+    let seconds = (since.max(0) / 1_000).min(9_999);
     let bar = "#".repeat(usize::from(width));
     paper.text(0, 0, &bar);
     paper.text(0, height - 2, &bar);
