@@ -284,10 +284,8 @@ fn rungs(card: &mut Card, steps: &[Step], parts: &Parts) {
         .any(|s| matches!(s.act, StepAct::Cut(Cut::Plunge { .. })));
     let mut committed = false;
     for step in steps {
-        let commits = match &step.act {
-            StepAct::Cut(Cut::StrapRelease) => true,
-            _ => !plunged && opens_the_rear(step),
-        };
+        let released = matches!(step.act, StepAct::Cut(Cut::StrapRelease));
+        let commits = released || (!plunged && opens_the_rear(step));
         if asked_elsewhere(step) {
             continue;
         }

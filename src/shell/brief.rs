@@ -9,7 +9,7 @@ use thiserror::Error;
 use super::beginning::{DayError, Ground};
 use super::day::Day;
 use super::terminal::{Heard, Screen};
-use crate::tui::{self, Look, View};
+use crate::tui::{self, Key, Look, View};
 
 /// How the program was left.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -53,6 +53,7 @@ fn turn(day: &mut Day, screen: &mut Screen, look: Look) -> Result<Left, BriefErr
             Heard::End(number) => return Ok(Left::Signal(number)),
             Heard::Nothing => day.on_quiet()?,
             Heard::Resized => {}
+            Heard::Key(key) if !is_taken(screen.size()?, &key) => {}
             Heard::Key(key) => {
                 let mut redraw = |day: &Day| {
                     if let Err(error) = paint(screen, day, look) {
@@ -72,6 +73,11 @@ fn turn(day: &mut Day, screen: &mut Screen, look: Look) -> Result<Left, BriefErr
             return Err(error.into());
         }
     }
+}
+
+/// Where the window cannot show what is asked nothing is answered; STOP and leaving are taken.
+fn is_taken((width, height): (u16, u16), key: &Key) -> bool {
+    tui::shows_what_is_asked(width, height) || matches!(key, Key::Char(' ') | Key::Interrupt)
 }
 
 /// The time to the next full second, when the clock on the screen changes; never long enough for

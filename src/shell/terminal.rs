@@ -93,6 +93,15 @@ impl Screen {
         Ok(())
     }
 
+    /// Columns and rows of the window.
+    ///
+    /// # Errors
+    /// What the system says.
+    pub fn size(&self) -> io::Result<(u16, u16)> {
+        let size = self.terminal.size()?;
+        Ok((size.width, size.height))
+    }
+
     /// Waits for a key, a resize, a signal, or the end of the time.
     ///
     /// # Errors

@@ -14,4 +14,4 @@ pub use ascii::to_ascii;
 pub use desk::{Desk, Intent, Overlay};
 pub use key::Key;
 pub use look::{Ground, Letters, Look};
-pub use screen::{View, draw};
+pub use screen::{View, draw, shows_what_is_asked};

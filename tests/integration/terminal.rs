@@ -264,6 +264,13 @@ fn small_windows_say_what_they_need_and_recover() {
     terminal.wait("roll call", |s| s.contains("> 1 >"));
     terminal.resize((30, 8));
     terminal.wait("what it needs", |s| s.contains("needs 40x12, has 30x8"));
+    terminal.keys("1\r1\r");
+    terminal.look();
+    assert_eq!(
+        answers_on_disk(&job),
+        Vec::<String>::new(),
+        "no hidden field takes an answer"
+    );
     terminal.resize((40, 12));
     terminal.wait("the card", |s| s.contains("ROLL CALL, step 1"));
     terminal.resize((120, 40));

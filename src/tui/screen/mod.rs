@@ -42,6 +42,11 @@ pub struct View<'a> {
 const WIDE: (u16, u16) = (80, 24);
 const LEAST: (u16, u16) = (40, 12);
 
+/// Whether a window of this size shows what is asked. In a smaller one only STOP is taken.
+pub const fn shows_what_is_asked(width: u16, height: u16) -> bool {
+    width >= LEAST.0 && height >= LEAST.1
+}
+
 /// Draws the view into a buffer.
 pub fn draw(view: &View<'_>, area: Rect, buffer: &mut Buffer) {
     let mut paper = Paper::new(buffer, area, view.look);
