@@ -1,7 +1,7 @@
 //! `record` and `crew` as people and programs call them: exact output and exit codes.
 #![expect(
     clippy::unwrap_used,
-    reason = "helpers of tests stand outside the test functions"
+    reason = "functions that tests share stand outside the test functions"
 )]
 #![expect(clippy::disallowed_methods, reason = "a test lays out job folders")]
 

@@ -2,7 +2,7 @@
 //! a worse split ratio, scaling, ovals, and a faster saw never more tilt.
 #![expect(
     clippy::unwrap_used,
-    reason = "helpers of tests stand outside the test functions"
+    reason = "functions that tests share stand outside the test functions"
 )]
 
 use proptest::prelude::*;

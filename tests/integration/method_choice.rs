@@ -2,7 +2,7 @@
 //! their own method.
 #![expect(
     clippy::unwrap_used,
-    reason = "helpers of tests stand outside the test functions"
+    reason = "functions that tests share stand outside the test functions"
 )]
 
 use stumpside::figures::{CaseState, Condition, Line, SiteStop};

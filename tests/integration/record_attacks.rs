@@ -1,7 +1,7 @@
 //! The attacks on a record that the kit holds: how each is made, and what must come of it.
 #![expect(
     clippy::unwrap_used,
-    reason = "helpers of tests stand outside the test functions"
+    reason = "functions that tests share stand outside the test functions"
 )]
 
 use ed25519_dalek::Signer as _;

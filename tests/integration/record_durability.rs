@@ -2,7 +2,7 @@
 //! What was acknowledged is there afterwards, and what was not never counts.
 #![expect(
     clippy::unwrap_used,
-    reason = "helpers of tests stand outside the test functions"
+    reason = "functions that tests share stand outside the test functions"
 )]
 #![expect(clippy::disallowed_methods, reason = "a test damages files on purpose")]
 

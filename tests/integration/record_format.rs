@@ -1,7 +1,7 @@
 //! The bytes of one line, read and refused, and the written page against the table of kinds.
 #![expect(
     clippy::unwrap_used,
-    reason = "helpers of tests stand outside the test functions"
+    reason = "functions that tests share stand outside the test functions"
 )]
 #![expect(clippy::disallowed_methods, reason = "a test reads the written page")]
 

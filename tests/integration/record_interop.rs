@@ -2,7 +2,7 @@
 //! `tests/all.sh` installs them; where they are missing these tests fail and say so.
 #![expect(
     clippy::unwrap_used,
-    reason = "helpers of tests stand outside the test functions"
+    reason = "functions that tests share stand outside the test functions"
 )]
 #![expect(
     clippy::disallowed_methods,

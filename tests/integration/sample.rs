@@ -1,7 +1,7 @@
 //! Trees made up for the tests. They stand nowhere.
 #![expect(
     clippy::unwrap_used,
-    reason = "helpers of tests stand outside the test functions"
+    reason = "functions that tests share stand outside the test functions"
 )]
 
 use stumpside::figures::{Crown, CrownInput, Saw, TreeInput, WayOut};

@@ -2,7 +2,7 @@
 //! turn, mirrored ones in the mirror, and more lean never a better margin or a bolder method.
 #![expect(
     clippy::unwrap_used,
-    reason = "helpers of tests stand outside the test functions"
+    reason = "functions that tests share stand outside the test functions"
 )]
 
 use proptest::prelude::*;

@@ -1,7 +1,7 @@
 //! Sequences on the virtual stump: each names what it must come to, most are wrong on purpose.
 #![expect(
     clippy::unwrap_used,
-    reason = "helpers of tests stand outside the test functions"
+    reason = "functions that tests share stand outside the test functions"
 )]
 
 use stumpside::mechanics::holding::{Demand, Wood, ligament_section};

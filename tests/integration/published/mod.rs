@@ -1,7 +1,7 @@
 //! Published and worked figures, one file a source. Nothing here is tuned to the code.
 #![expect(
     clippy::unwrap_used,
-    reason = "helpers of tests stand outside the test functions"
+    reason = "functions that tests share stand outside the test functions"
 )]
 
 mod biomass;
