@@ -126,8 +126,12 @@ impl Readers {
 pub fn write_new(path: &Path, bytes: &[u8], readers: Readers) -> Result<(), FileError> {
     let fault = |source| FileError::write(path, source);
     let mut file = open_new(path, readers)?;
-    file.write_all(bytes).map_err(fault)?;
-    file.sync_all().map_err(fault)
+    let written = file.write_all(bytes).and_then(|()| file.sync_all());
+    written.map_err(|source| {
+        // Half a file would stand in the way of the next try; it was made here and is nobody's.
+        let _ = remove(path);
+        fault(source)
+    })
 }
 
 /// Writes a new file, or finds the very same bytes there.

@@ -157,3 +157,39 @@ fn a_file_that_never_got_its_first_line_can_still_begin() {
     let (record, _) = RecordFile::create(&places, &one_person()).unwrap();
     assert_eq!(record.next_seq(), 1);
 }
+
+#[test]
+fn a_file_that_could_not_be_written_whole_is_not_left_in_the_way() {
+    // A full device takes the name and none of the bytes.
+    let folder = tempfile::tempdir().unwrap();
+    let path = folder.path().join("plan.yaml");
+    let limit = "ulimit -f 1; trap '' XFSZ; exec \"$0\" \"$@\"";
+    let run = |program: &[&str]| {
+        std::process::Command::new("sh")
+            .arg("-c")
+            .arg(limit)
+            .args(program)
+            .output()
+            .unwrap()
+    };
+    // One block of 512 bytes: the demo plan is longer.
+    let output = run(&[
+        env!("CARGO_BIN_EXE_stumpside"),
+        "demo",
+        "--copy-only",
+        "--job",
+        folder.path().to_str().unwrap(),
+    ]);
+    assert_eq!(output.status.code(), Some(4), "{output:?}");
+    assert!(!path.exists(), "half a plan would stand in the way");
+    let again = std::process::Command::new(env!("CARGO_BIN_EXE_stumpside"))
+        .args([
+            "demo",
+            "--copy-only",
+            "--job",
+            folder.path().to_str().unwrap(),
+        ])
+        .output()
+        .unwrap();
+    assert_eq!(again.status.code(), Some(0), "{again:?}");
+}

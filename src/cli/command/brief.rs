@@ -143,7 +143,15 @@ fn explain(error: &DayError, output: &mut Output<'_>) -> Exit {
             Exit::No
         }
         DayError::Record(RecordError::Refused { .. }) => Exit::No,
-        DayError::Record(_) | DayError::Entropy(_) => Exit::Unwritable,
+        DayError::Record(RecordError::Fork(..) | RecordError::WrongKey(..)) => Exit::No,
+        DayError::Record(RecordError::Locked(_)) => {
+            output.talk("close the other program first, or give this plan a folder of its own");
+            Exit::Unwritable
+        }
+        DayError::Record(_) | DayError::Entropy(_) => {
+            output.talk("nothing was begun: free some room, or choose a folder that can be written with --job");
+            Exit::Unwritable
+        }
         DayError::Folder(_)
         | DayError::Key(_)
         | DayError::File(_)
