@@ -553,5 +553,11 @@ fn timing_note(rung: &Rung) -> String {
         "hold" => "HOLD: only when both have said go",
         _ => "at leisure",
     };
-    format!("{pace}{}{note}", seconds.unwrap_or_default())
+    let hinge = match (rung.word.as_str(), rung.planned_um) {
+        ("back-cut" | "tilted-back-cut", Some(um)) => {
+            format!(", stop at {} mm of hinge", (um + 500) / 1_000)
+        }
+        _ => String::new(),
+    };
+    format!("{pace}{hinge}{}{note}", seconds.unwrap_or_default())
 }

@@ -206,7 +206,7 @@ fn past_tolerance(session: &Session) -> Vec<Change> {
             && *value > limit
         {
             changes.push(Change {
-                what: "wind over the plan's limit".to_owned(),
+                what: "wind over the plan's limit: wait, or leave it".to_owned(),
                 old: in_words(*what, limit),
                 new: typed.clone(),
             });

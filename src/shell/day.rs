@@ -184,7 +184,12 @@ impl Day {
             .is_some_and(|at| self.clock.now().up_ms - at >= 1_000);
         if quiet && !self.on_paper && self.session.stage != Stage::Closed {
             let facts = self.refused_keys();
-            self.record_facts(facts, &mut |_| {})?;
+            // What is half typed stays: nobody answered anything.
+            match self.write(facts) {
+                Ok(_) => {}
+                Err(RecordError::NotRecorded { seq, source }) => self.not_recorded(seq, &source),
+                Err(error) => return Err(error.into()),
+            }
         }
         Ok(())
     }

@@ -197,6 +197,12 @@ impl Desk {
     }
 
     fn on_work_screen(&mut self, session: &Session, key: &Key) -> Option<Intent> {
+        // The figures cover the step: nothing is answered unseen, any key brings the step back.
+        let passes = matches!(key, Key::Char(' ' | 'v' | '?' | 'q') | Key::Interrupt);
+        if self.picture == Picture::Figures && session.card().is_some() && !passes {
+            self.picture = Picture::Step;
+            return None;
+        }
         match key {
             Key::Char(' ') => return self.stop(session),
             Key::Interrupt if matches!(session.stage, Stage::Stopped | Stage::Closed) => {

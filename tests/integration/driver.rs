@@ -19,6 +19,8 @@ pub(crate) struct Terminal {
     pub(crate) sent: Vec<u8>,
 }
 
+static STARTS: std::sync::Mutex<()> = std::sync::Mutex::new(());
+
 /// How long anything may take on a loaded machine.
 const PATIENCE: Duration = Duration::from_secs(60);
 
@@ -40,6 +42,10 @@ impl Terminal {
             pixel_width: 0,
             pixel_height: 0,
         };
+        // No other start may inherit this terminal between its opening and its closing on exec.
+        let one_at_a_time = STARTS
+            .lock()
+            .unwrap_or_else(std::sync::PoisonError::into_inner);
         let pair = native_pty_system().openpty(size).unwrap();
         let mut command = CommandBuilder::new("sh");
         // A limit on the size of files stands in for a full disk: the shell sets it, then becomes
@@ -67,6 +73,7 @@ impl Terminal {
         command.cwd(state);
         let child = pair.slave.spawn_command(command).unwrap();
         drop(pair.slave);
+        drop(one_at_a_time);
         let mut reader = pair.master.try_clone_reader().unwrap();
         let (to, bytes) = channel();
         std::thread::spawn(move || {
@@ -311,15 +318,11 @@ fn numbers_for(screen: &str) -> String {
             .parse::<i64>()
             .ok()
     };
-    let header_lean = || {
-        let header = screen.lines().next()?;
-        header
-            .split("lean ")
-            .nth(1)?
-            .split(' ')
-            .next()?
-            .parse::<i64>()
-            .ok()
+    // What two people see at the trees of the demo job; a blind look shows no figure to copy.
+    let lean = match screen.lines().next().unwrap_or("").trim_start().get(..2) {
+        Some("T3") => 8,
+        Some("T2") => 3,
+        _ => 2,
     };
     let mut keys = String::new();
     for line in panel
@@ -338,7 +341,7 @@ fn numbers_for(screen: &str) -> String {
         let value = match label {
             "wind" => 9,
             "heads inside" => 1,
-            "lean" => header_lean().unwrap_or(2),
+            "lean" => lean,
             "height" => 20,
             label => planned(label).unwrap_or(40),
         };

@@ -51,13 +51,13 @@ pub(super) fn lines(card: &Card) -> Vec<String> {
         .figure("split_ratio_at_commit")
         .map_or(String::new(), |figure| {
             let [low, best, high] = figure.band.map(times);
-            format!("Times the limit: middle {best}, {low} to {high}.")
+            format!("Splits at {best} times what is asked ({low} to {high})")
         });
     vec![
         format!("MARGIN  {}", marks.trim_end()),
         format!("State: {state}, {counted}"),
         range,
-        format!("Worst credible: {worst} times the limit"),
+        format!("Worst credible: at {worst} times; the limit is 1.0"),
         format!("Most doubt: {}", card.doubt.split(';').next().unwrap_or("")),
         format!(
             "To shrink it:{}",

@@ -62,7 +62,12 @@ pub(super) fn tree_line(session: &Session) -> String {
         })
     };
     let stump = words::length(measured(What::Stump).unwrap_or(tree.stump_um), job.units);
-    let lean = match (tree.lean_mdeg, tree.lean_toward_mdeg) {
+    // A blind look is not led by the plan's own figure.
+    let blind = session
+        .lit()
+        .is_some_and(|i| i.blind_with.is_some() && i.id == "lean");
+    let planned = tree.lean_mdeg.filter(|_| !blind);
+    let lean = match (planned, tree.lean_toward_mdeg) {
         (Some((angle, _)), Some(toward)) => {
             format!(
                 ", lean {} to {:03}",
@@ -139,10 +144,24 @@ pub(super) fn footer_words(view: &View<'_>) -> String {
         Form::Sign => format!("{n}, Enter = sign"),
         Form::Start => format!("{n}, Enter = the cut begins"),
     };
+    let undo = match session.stage {
+        Stage::ShortTalk | Stage::WalkUp | Stage::Cuts => "   u undo",
+        Stage::RollCall
+        | Stage::OwnHazards
+        | Stage::Questions
+        | Stage::Signing
+        | Stage::Choose
+        | Stage::HoldLine
+        | Stage::AllClear
+        | Stage::Closing
+        | Stage::Closed
+        | Stage::Stopped
+        | Stage::TalkAgain => "",
+    };
     let stop = if session.stage == Stage::Stopped {
         "stopped"
     } else {
         "SPACE = STOP"
     };
-    format!("{stop}   {how}   u undo   ? help")
+    format!("{stop}   {how}{undo}   ? help")
 }

@@ -42,14 +42,16 @@ pub(super) fn draw(view: &View<'_>, paper: &mut Paper<'_>, part: Rect) {
     let inner = |row: u16| Rect::new(part.x, row, width, bottom.saturating_sub(row + 4));
     row += paper.wrapped_bold(inner(row), &item.name.to_uppercase());
     row = changes(session, paper, inner(row + 1)).unwrap_or(row);
-    row += paper.wrapped(inner(row), &format!("Call: \"{}\"", item.call));
-    row += paper.wrapped(inner(row), &asked(session, &item));
+    if session.stage != Stage::TalkAgain {
+        row += paper.wrapped(inner(row), &format!("Call: \"{}\"", item.call));
+        row += paper.wrapped(inner(row), &asked(session, &item));
+    }
     if let Some(timing) = &item.timing {
         row += paper.wrapped_bold(inner(row), &format!("Pace: {timing}"));
     }
     if let Some(sentence) = item.sentence.as_ref().filter(|_| item.form == Form::Sign) {
         row += paper.wrapped_bold(inner(row), &format!("\"{sentence}\""));
-        if item.form == Form::Sign {
+        if item.form == Form::Sign && session.stage != Stage::TalkAgain {
             row += paper.wrapped(
                 inner(row),
                 &format!("signed over the record so far, {}", view.code),
