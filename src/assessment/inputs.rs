@@ -163,7 +163,8 @@ fn defects(tree: &Tree) -> (Vec<Condition>, Vec<Cavity>) {
     (conditions, cavities)
 }
 
-fn lean(lean: &plan::Lean) -> Lean {
+/// The total lean, however it was measured: straight toward a bearing, or from two views.
+pub fn lean(lean: &plan::Lean) -> Lean {
     match lean {
         plan::Lean::Toward { angle, toward } => Lean {
             angle: angle.reading,

@@ -31,7 +31,7 @@ use crate::rules::{self, Facts, SizeUp};
 use crate::species;
 use look::{Check, Look};
 
-pub use inputs::{Since, distance, tree_input};
+pub use inputs::{Since, distance, lean, tree_input};
 pub use sized::{SizedTree, size_up};
 
 /// Says whether a species is known, or which known ones are nearest.

@@ -1,7 +1,7 @@
 //! The job as the day needs it: people, trees, tolerances, sentences. Made from the plan and the
 //! parts; it keeps integers in the record's units.
 
-use crate::mechanics::lean::{TwoViews, from_two_views};
+use crate::assessment;
 use crate::parts::Parts;
 use crate::plan::{DisplayUnits, Lean, Measured, Plan, Role, Tree};
 use crate::units::{Angle, FromSi, Length};
@@ -198,24 +198,7 @@ fn tree(tree: &Tree) -> JobTree {
 
 /// Angle, spread and bearing in degrees of a lean, however it was measured.
 fn total_lean(lean: &Lean) -> (Angle, Angle, f64) {
-    let lean = match lean {
-        Lean::Toward { angle, toward } => {
-            return (
-                angle.reading.value,
-                angle.reading.spread,
-                toward.value.in_deg(),
-            );
-        }
-        Lean::Views {
-            view_a,
-            view_b,
-            facing,
-        } => from_two_views(&TwoViews {
-            view_a: view_a.reading,
-            view_b: view_b.reading,
-            facing: facing.value,
-        }),
-    };
+    let lean = assessment::lean(lean);
     (lean.angle.value, lean.angle.spread, lean.toward.in_deg())
 }
 
