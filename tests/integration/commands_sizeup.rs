@@ -2,23 +2,10 @@
 //! and a sequence written by hand judged as it is.
 
 use std::path::Path;
-use std::process::Command;
 
 use serde_json::Value;
 
-use crate::support::DEMO_PLAN;
-
-fn run(arguments: &[&str]) -> (i32, String, String) {
-    let output = Command::new(env!("CARGO_BIN_EXE_stumpside"))
-        .args(arguments)
-        .output()
-        .unwrap();
-    (
-        output.status.code().unwrap(),
-        String::from_utf8(output.stdout).unwrap(),
-        String::from_utf8(output.stderr).unwrap(),
-    )
-}
+use crate::support::{DEMO_PLAN, run};
 
 fn plan_in(folder: &Path, text: &str) -> String {
     let path = folder.join("plan.yaml");

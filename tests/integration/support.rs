@@ -1,6 +1,7 @@
 //! What several tests share: the demo job in memory, cards made for tests, keys pressed without
 //! a terminal or a disk.
 
+use std::process::Command;
 use std::sync::Arc;
 
 use stumpside::briefing::{Card, Job, StumpCard, rung_of};
@@ -314,4 +315,17 @@ impl Bench {
             Form::Sign | Form::Start => self.keys(&format!("{n}\n")),
         }
     }
+}
+
+/// Exit code, standard output and standard error of the built program.
+pub(crate) fn run(arguments: &[&str]) -> (i32, String, String) {
+    let output = Command::new(env!("CARGO_BIN_EXE_stumpside"))
+        .args(arguments)
+        .output()
+        .unwrap();
+    (
+        output.status.code().unwrap(),
+        String::from_utf8(output.stdout).unwrap(),
+        String::from_utf8(output.stderr).unwrap(),
+    )
 }

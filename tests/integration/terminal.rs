@@ -1,23 +1,10 @@
 //! The built program in a real terminal: the whole demo job, kills, signals, small windows.
 
 use std::path::Path;
-use std::process::Command;
 use std::time::Duration;
 
 use crate::driver::{Terminal, keys_for, position};
-use crate::support::tries;
-
-fn run(arguments: &[&str]) -> (i32, String, String) {
-    let output = Command::new(env!("CARGO_BIN_EXE_stumpside"))
-        .args(arguments)
-        .output()
-        .unwrap();
-    (
-        output.status.code().unwrap(),
-        String::from_utf8(output.stdout).unwrap(),
-        String::from_utf8(output.stderr).unwrap(),
-    )
-}
+use crate::support::{run, tries};
 
 fn record_of(job: &Path) -> String {
     job.join("record.jsonl").to_str().unwrap().to_owned()
